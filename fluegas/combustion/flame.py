@@ -1,0 +1,77 @@
+"""Adiabatic flame temperature of complete combustion: CO2, H2O, SO2, HCl, N2, Ar, He and O2 only, no dissociation.
+
+The net heating value, less what stays in the ash, and the sensible heats of fuel and of air at the burner all go into
+the products; unburnt gases in the readings are taken as burnt. Recirculated flue gas takes part at its own temperature.
+"""
+
+from dataclasses import dataclass
+
+import numpy as np
+
+from fluegas.combustion.air import DRY_AIR_GASES, dry_air_amounts, dry_air_molar_mass
+from fluegas.combustion.product_gas import ProductGas
+from fluegas.thermo.mixture import GasSet, Mixture
+from fluegas.thermo.polynomials import FloatArray
+from fluegas.thermo.temperature import temperature_from_enthalpy
+
+COMPLETE_PRODUCTS = ("CO2", "H2O", "SO2", "HCl", "N2", "Ar", "He", "O2")
+"""Products of complete combustion, in the order of the first axis of `complete_products`."""
+
+
+@dataclass(frozen=True)
+class Recirculation:
+    """Flue gas led back to the flame: `share` in kg per kg of air and fuel, at `temperature` [K]."""
+
+    share: FloatArray
+    temperature: FloatArray
+
+
+def complete_products(gas: ProductGas) -> FloatArray:
+    """Return the amounts of COMPLETE_PRODUCTS [mol/kg fuel], shape `(8, ...)`; O2 is negative where fuel-rich."""
+    element = gas.fuel.element
+    air = dry_air_amounts(gas.dry_air, gas.air.oxygen)
+    amounts = (
+        gas.burned_carbon + air["CO2"],
+        gas.water_formed + gas.fuel.moisture + gas.water_from_air,
+        element("S"),
+        element("Cl"),
+        element("N") / 2 + air["N2"],
+        element("Ar") + air["Ar"],
+        element("He"),
+        air["O2"] - gas.theoretical_oxygen,
+    )
+    return np.stack(np.broadcast_arrays(*amounts))
+
+
+def air_mixture(gas: ProductGas) -> Mixture:
+    """Return the humid air per kilogram of fuel, enthalpy counted from the fuel's reference temperature."""
+    amounts = (*dry_air_amounts(gas.dry_air, gas.air.oxygen).values(), gas.water_from_air)
+    gases = GasSet((*DRY_AIR_GASES, "H2O")).referenced(gas.fuel.reference_temperature)
+    return gases.mixture(np.stack(np.broadcast_arrays(*amounts)))
+
+
+def complete_flame_temperature(
+    gas: ProductGas,
+    fuel_temperature: FloatArray,
+    unburned_heat: FloatArray | float = 0.0,
+    recirculation: Recirculation | None = None,
+) -> FloatArray:
+    """Return the flame temperature of complete combustion [K]; NaN where fuel-rich.
+
+    `fuel_temperature` [K] is that at the burner; `unburned_heat` [J/kg fuel] stays in the ash.
+
+    Raises RangeError if the flame would be hotter than 6000 K.
+    """
+    amounts = complete_products(gas)
+    lean = amounts[-1] >= -1e-7 * gas.theoretical_oxygen
+    products_set = GasSet(COMPLETE_PRODUCTS).referenced(gas.fuel.reference_temperature)
+    products = products_set.mixture(np.maximum(amounts, 0.0))
+    heat = gas.fuel.net_heating_value - unburned_heat + gas.fuel.sensible_heat(fuel_temperature)
+    heat = heat + air_mixture(gas).enthalpy(gas.air.at_burner)
+    if recirculation is not None:
+        product_mass = np.tensordot(products_set.molar_mass, amounts, 1)
+        air_mass = dry_air_molar_mass(gas.air.oxygen) * gas.dry_air
+        water_mass = gas.water_from_air * products_set.molar_mass[1]
+        ratio = recirculation.share * (1.0 + air_mass + water_mass) / product_mass
+        heat = (heat + ratio * products.enthalpy(recirculation.temperature)) / (1.0 + ratio)
+    return temperature_from_enthalpy(products, np.where(lean & ~gas.is_unknown, heat, np.nan))
