@@ -1,0 +1,79 @@
+"""What stands beside the account: stack loss from air temperature, available heat, flame, dew points, carbon dioxide.
+
+Every function takes the Terms of one chunk and gives an array that broadcasts to its state shape.
+"""
+
+import numpy as np
+
+from fluegas.accounting.flue_heat import FlueHeat
+from fluegas.accounting.inputs import GROSS, NET
+from fluegas.accounting.terms import UNBURNT_GASES, Terms
+from fluegas.combustion.dew_point import acid_dew_point, water_dew_point
+from fluegas.combustion.flame import complete_flame_temperature
+from fluegas.thermo.polynomials import FloatArray
+from fluegas.thermo.species import species
+
+
+def stack_loss_from_air(terms: Terms) -> FloatArray:
+    """Return the heat of the wet flue gas from air to flue temperature over the net value; no latent heat, no CO."""
+    start, end = FlueHeat(terms.gas, terms.data.air.temperature), terms.flue
+    heat = end.dry_gas - start.dry_gas + terms.gas.water * (end.of_vapour - start.of_vapour)
+    return heat / terms.heating_value(NET)
+
+
+def short_formula(terms: Terms) -> FloatArray:
+    """Return the flue loss by the short formula (t_flue - t_air)(A/(21 - O2) + B), NaN where the fuel has none.
+
+    German 1. BImSchV (2010), annex 2, number 3.4.1; temperatures in degC, O2 in percent of the dry gas.
+    """
+    oxygen = 100.0 * terms.gas.oxygen_left / terms.gas.dry_flue_gas
+    rise = terms.flue.temperature - terms.data.air.temperature
+    return np.asarray(rise * (terms.data.short_formula_a / (21.0 - oxygen) + terms.data.short_formula_b) / 100.0)
+
+
+def available_heat(terms: Terms, basis: str) -> FloatArray:
+    """Return the heat left to the furnace above the chamber temperature over the heat input; NaN where none is given.
+
+    Credits are those at the burner; the surface loss is not taken off.
+    """
+    chamber = terms.data.readings.chamber_temperature
+    if chamber is None:
+        return np.full((), np.nan)
+    known = ~np.isnan(chamber)
+    there = FlueHeat(terms.gas, np.where(known, chamber, 1000.0))
+    lost = there.dry_gas + there.fuel_water + there.air_moisture + terms.unburned_carbon
+    if basis == GROSS:
+        lost = lost + terms.latent_heat
+    for symbol in UNBURNT_GASES.values():
+        lost = lost + terms.unburnt_gas(symbol, basis)
+    brought = sum(terms.credits_at(terms.data.air.at_burner).values())
+    return np.where(known, 1.0 + (brought - lost) / terms.heating_value(basis), np.nan)
+
+
+def flame_temperature(terms: Terms) -> FloatArray:
+    """Return the flame temperature of complete combustion [K]; NaN where fuel-rich."""
+    data = terms.data
+    return complete_flame_temperature(terms.gas, data.fuel_temperature, terms.unburned_carbon, data.recirculation)
+
+
+def _water_pressure(terms: Terms) -> FloatArray:
+    pressure = np.asarray(terms.gas.water / terms.gas.wet_flue_gas * terms.data.air.pressure)
+    return np.where(terms.gas.is_unknown, 0.0, pressure)
+
+
+def dew_point_of_water(terms: Terms) -> FloatArray:
+    """Return the water dew point of the flue gas [K]; NaN without water."""
+    return water_dew_point(_water_pressure(terms))
+
+
+def dew_point_of_acid(terms: Terms) -> FloatArray:
+    """Return the sulfuric acid dew point of the flue gas [K]; NaN without sulfur."""
+    trioxide = terms.gas.amount("SO2") * terms.data.sulfur_trioxide_share
+    partial = trioxide / terms.gas.wet_flue_gas * terms.data.air.pressure
+    return acid_dew_point(_water_pressure(terms), partial, terms.data.acid_correlation)
+
+
+def fossil_carbon_dioxide(terms: Terms) -> FloatArray:
+    """Return the fossil CO2 from the carbon that burns [kg/kg fuel]; unburnt gases counted as burnt."""
+    fossil = terms.gas.burned_carbon * (1.0 - np.asarray(terms.data.biogenic_share))
+    return np.asarray(fossil * species("CO2").molar_mass)

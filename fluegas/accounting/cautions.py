@@ -1,0 +1,144 @@
+"""What is doubtful about a setting's account, as data: codes, values, limits and where the limits come from.
+
+Cautions never change a figure. Those on carbon monoxide, fuel-rich firing and condensate say what the usual safe
+practice is and defer to local codes, the maker's instructions and licensed persons.
+"""
+
+from collections.abc import Mapping
+from dataclasses import dataclass
+
+import numpy as np
+
+from fluegas.accounting.inputs import AccountInput
+from fluegas.combustion.dew_point import ACID_DOUBT
+from fluegas.errors import Caution
+
+IDEAL_GAS_PRESSURE, IDEAL_GAS_TEMPERATURE = 3e5, 450.0
+COLDEST_CHECKED = 220.0
+LIMITS_SOURCE = "DVGW G 680 for 300 and 1000 ppm; common practice elsewhere"
+"""Source of the default limits of carbon monoxide."""
+
+
+@dataclass(frozen=True)
+class Limits:
+    """Limits of one setting: carbon monoxide in the undiluted dry gas (mole fractions) and the coldest metal [K]."""
+
+    carbon_monoxide_flag: float = 100e-6
+    carbon_monoxide_act: float = 300e-6
+    carbon_monoxide_stop: float = 1000e-6
+    carbon_monoxide_source: str = LIMITS_SOURCE
+    metal_temperature: float | None = None
+
+
+def cautions_of(data: AccountInput, figures: Mapping[str, float], limits: Limits) -> tuple[Caution, ...]:
+    """Return the cautions about one setting: `data` of state shape `()`, its `figures` by name."""
+    return (
+        *data.fuel.cautions,
+        *_fuel_rich(data, figures),
+        *_carbon_monoxide(data, figures, limits),
+        *_water(data, figures),
+        *_acid(data, figures, limits),
+        *_validity(data, figures),
+    )
+
+
+def _fuel_rich(data: AccountInput, figures: Mapping[str, float]) -> tuple[Caution, ...]:
+    air_ratio = figures["air_ratio"]
+    if air_ratio >= 1 - 1e-9:
+        return ()
+    known = not np.isnan(figures["efficiency.gross"])
+    account = (
+        "the account counts the CO and H2 that were read"
+        if known
+        else "no account can be given without readings of CO and H2 that fit"
+    )
+    message = (
+        f"fuel-rich: the air ratio is {air_ratio:.3g}; {account}. CO is deadly and may burn later: fuel is reduced "
+        "first, air is never added to a fuel-rich hot chamber. Licensed persons only; local codes and the maker's "
+        "instructions lead"
+    )
+    code = "fuel_rich" if known else "fuel_rich_unread"
+    return (Caution(code, message, air_ratio, 1.0, "common practice, no source"),)
+
+
+def _carbon_monoxide(data: AccountInput, figures: Mapping[str, float], limits: Limits) -> tuple[Caution, ...]:
+    oxygen, share = figures["flue_gas.dry.O2"], figures["flue_gas.dry.CO"]
+    if np.isnan(share) or share <= 0:
+        return ()
+    undiluted = float(share * data.air.oxygen / (data.air.oxygen - oxygen))
+    steps = (
+        (
+            limits.carbon_monoxide_stop,
+            "carbon_monoxide_stop",
+            "far above the usual limit: exhaust CO kills; the usual practice is to shut down at once and call a licensed person",
+        ),
+        (
+            limits.carbon_monoxide_act,
+            "carbon_monoxide_act",
+            "above the level at which combustion is put right before anything else, by licensed persons",
+        ),
+        (
+            limits.carbon_monoxide_flag,
+            "carbon_monoxide_flag",
+            "higher than a sound flame gives; check the readings and the burner's condition over the whole load range",
+        ),
+    )
+    for limit, code, meaning in steps:
+        if undiluted > limit:
+            message = (
+                f"CO is {undiluted * 1e6:.3g} ppm undiluted (air-free, dry), limit {limit * 1e6:.3g} ppm: {meaning}"
+            )
+            return (Caution(code, message, undiluted, limit, limits.carbon_monoxide_source),)
+    return ()
+
+
+def _water(data: AccountInput, figures: Mapping[str, float]) -> tuple[Caution, ...]:
+    dew_point, flue = figures["dew_point.water"], float(data.readings.flue_temperature)
+    if np.isnan(dew_point) or flue >= dew_point:
+        return ()
+    message = (
+        f"the flue gas leaves at {flue - 273.15:.1f} degC, below its water dew point of {dew_point - 273.15:.1f} degC: "
+        "condense only in units, drains and chimneys built for acid condensate"
+    )
+    return (Caution("below_water_dew_point", message, flue, dew_point, "IAPWS R7-97"),)
+
+
+def _acid(data: AccountInput, figures: Mapping[str, float], limits: Limits) -> tuple[Caution, ...]:
+    dew_point = figures["dew_point.acid"]
+    if np.isnan(dew_point):
+        return ()
+    limit = dew_point + ACID_DOUBT
+    places = [("the flue gas", float(data.readings.flue_temperature), "acid_dew_point_gas")]
+    if limits.metal_temperature is not None:
+        places.append(("the coldest metal", limits.metal_temperature, "acid_dew_point_metal"))
+    found = []
+    for what, temperature, code in places:
+        if temperature < limit:
+            message = (
+                f"{what} is at {temperature - 273.15:.0f} degC, not clear of the acid dew point of "
+                f"{dew_point - 273.15:.0f} +-5 degC: sulfuric acid may condense and corrode; gas above it does not "
+                "mean metal above it"
+            )
+            found.append(Caution(code, message, temperature, limit, data.acid_correlation))
+    return tuple(found)
+
+
+def _validity(data: AccountInput, figures: Mapping[str, float]) -> tuple[Caution, ...]:
+    found = []
+    pressure, flue = float(data.air.pressure), float(data.readings.flue_temperature)
+    if pressure > IDEAL_GAS_PRESSURE and flue < IDEAL_GAS_TEMPERATURE:
+        message = f"at {pressure / 1e5:.3g} bar and {flue - 273.15:.0f} degC the flue gas departs from an ideal gas"
+        found.append(
+            Caution("ideal_gas", message, pressure, IDEAL_GAS_PRESSURE, "enthalpy departures of a flue gas, CoolProp")
+        )
+    coldest = min(flue, float(data.air.temperature), float(data.fuel_temperature))
+    if coldest < COLDEST_CHECKED:
+        message = f"at {coldest:.0f} K the species data are extrapolated below what was checked"
+        found.append(Caution("cold_data", message, coldest, COLDEST_CHECKED, "NASA/TP-2002-211556 against CoolProp"))
+    efficiency = figures["efficiency.gross"]
+    if efficiency <= 0:
+        message = (
+            f"the losses exceed the heat input (useful heat {100 * efficiency:.3g} %): the readings cannot all be right"
+        )
+        found.append(Caution("no_useful_heat", message, efficiency, 0.0, "energy balance"))
+    return tuple(found)
