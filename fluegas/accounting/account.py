@@ -9,7 +9,7 @@ between.
 from collections.abc import Iterator, Mapping, Sequence
 from dataclasses import dataclass
 from math import prod
-from types import MappingProxyType
+from types import EllipsisType, MappingProxyType
 
 import numpy as np
 
@@ -20,7 +20,7 @@ from fluegas.errors import InputError
 from fluegas.thermo.polynomials import FloatArray
 
 CHUNK = 16_384
-"""States worked out at a time; their terms fit the processor's cache."""
+"""States worked out at a time: few enough that their terms stay in cache, many enough to spread what a chunk costs."""
 
 
 @dataclass(frozen=True)
@@ -51,19 +51,20 @@ def heat_account(data: AccountInput, outputs: Sequence[str] | None = None, *, ch
     """
     wanted = _wanted(outputs)
     shape = state_shape(data)
-    values = {figure.name: np.empty(shape) for figure in wanted}
-    axis = int(np.argmax(shape)) if shape else 0
-    step = max(1, chunk * shape[axis] // max(1, prod(shape))) if shape else 1
-    if not shape or prod(shape) <= chunk:
-        _fill(values, wanted, data, (...,))
+    values: dict[str, FloatArray] = {}
+    if 0 in shape:
+        values = {figure.name: np.empty(shape) for figure in wanted}
+    elif prod(shape) <= chunk:
+        _fill(values, wanted, data, shape, (...,))
     else:
+        axis = int(np.argmax(shape))
+        step = max(1, chunk * shape[axis] // prod(shape))
         for start in range(0, shape[axis], step):
             part = slice(start, min(start + step, shape[axis]))
             place = (*(slice(None),) * axis, part)
-            _fill(values, wanted, take(data, len(shape), axis, part), place)
-    for array in values.values():
-        array.flags.writeable = False
-    return HeatAccount(shape, MappingProxyType(values))
+            _fill(values, wanted, take(data, len(shape), axis, part), shape, place)
+    found = {name: np.broadcast_to(array, shape) for name, array in values.items()}
+    return HeatAccount(shape, MappingProxyType(found))
 
 
 def _wanted(outputs: Sequence[str] | None) -> list[Figure]:
@@ -77,15 +78,33 @@ def _wanted(outputs: Sequence[str] | None) -> list[Figure]:
 
 
 def _fill(
-    values: dict[str, FloatArray], wanted: Sequence[Figure], data: AccountInput, place: tuple[object, ...]
+    values: dict[str, FloatArray],
+    wanted: Sequence[Figure],
+    data: AccountInput,
+    shape: tuple[int, ...],
+    place: tuple[slice | EllipsisType, ...],
 ) -> None:
-    """Work out one chunk. States that cannot be worked out divide by nothing sensible; they are marked NaN."""
+    """Work out one chunk. A figure that is one and the same number in every state so far is kept as that number.
+
+    States that cannot be worked out divide by nothing sensible; they are marked NaN.
+    """
     terms = Terms(data)
     with np.errstate(divide="ignore", invalid="ignore"):
         unknown = terms.gas.is_unknown
         any_unknown = bool(np.any(unknown))
         for figure in wanted:
-            value = figure.formula(terms)
+            value = np.asarray(figure.formula(terms))
             if any_unknown and not figure.when_rich:
                 value = np.where(unknown, np.nan, value)
-            values[figure.name][place] = value  # type: ignore[index]  # an index of slices, built above
+            before = values.get(figure.name)
+            if value.size == 1 and (
+                before is None or (before.size == 1 and np.array_equal(before, value, equal_nan=True))
+            ):
+                values[figure.name] = value.reshape(())
+                continue
+            if before is None or before.shape != shape:
+                constant = before
+                before = values[figure.name] = np.empty(shape)
+                if constant is not None:
+                    before[...] = constant
+            before[place] = value

@@ -7,16 +7,17 @@ import numpy as np
 
 from fluegas.accounting.flue_heat import FlueHeat
 from fluegas.accounting.inputs import GROSS, NET
-from fluegas.accounting.terms import UNBURNT_GASES, Terms
+from fluegas.accounting.terms import UNBURNT_GASES, Terms, total
 from fluegas.combustion.dew_point import acid_dew_point, water_dew_point
 from fluegas.combustion.flame import complete_flame_temperature
+from fluegas.thermo.mixture import Temperature
 from fluegas.thermo.polynomials import FloatArray
 from fluegas.thermo.species import species
 
 
 def stack_loss_from_air(terms: Terms) -> FloatArray:
     """Return the heat of the wet flue gas from air to flue temperature over the net value; no latent heat, no CO."""
-    start, end = FlueHeat(terms.gas, terms.data.air.temperature), terms.flue
+    start, end = FlueHeat(terms.gas, terms.air_temperature), terms.flue
     heat = end.dry_gas - start.dry_gas + terms.gas.water * (end.of_vapour - start.of_vapour)
     return heat / terms.heating_value(NET)
 
@@ -26,8 +27,10 @@ def short_formula(terms: Terms) -> FloatArray:
 
     German 1. BImSchV (2010), annex 2, number 3.4.1; temperatures in degC, O2 in percent of the dry gas.
     """
+    if np.all(np.isnan(terms.data.short_formula_a)):
+        return np.full((), np.nan)
     oxygen = 100.0 * terms.gas.oxygen_left / terms.gas.dry_flue_gas
-    rise = terms.flue.temperature - terms.data.air.temperature
+    rise = terms.flue.at.kelvin - terms.data.air.temperature
     return np.asarray(rise * (terms.data.short_formula_a / (21.0 - oxygen) + terms.data.short_formula_b) / 100.0)
 
 
@@ -40,13 +43,13 @@ def available_heat(terms: Terms, basis: str) -> FloatArray:
     if chamber is None:
         return np.full((), np.nan)
     known = ~np.isnan(chamber)
-    there = FlueHeat(terms.gas, np.where(known, chamber, 1000.0))
+    there = FlueHeat(terms.gas, Temperature(np.where(known, chamber, 1000.0), "chamber temperature"))
     lost = there.dry_gas + there.fuel_water + there.air_moisture + terms.unburned_carbon
     if basis == GROSS:
         lost = lost + terms.latent_heat
     for symbol in UNBURNT_GASES.values():
         lost = lost + terms.unburnt_gas(symbol, basis)
-    brought = sum(terms.credits_at(terms.data.air.at_burner).values())
+    brought = total(terms.credits_at(Temperature(terms.data.air.at_burner, "burner temperature")).values())
     return np.where(known, 1.0 + (brought - lost) / terms.heating_value(basis), np.nan)
 
 

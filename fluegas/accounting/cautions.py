@@ -12,6 +12,7 @@ import numpy as np
 from fluegas.accounting.inputs import AccountInput
 from fluegas.combustion.dew_point import ACID_DOUBT
 from fluegas.errors import Caution
+from fluegas.thermo.polynomials import FloatArray
 
 IDEAL_GAS_PRESSURE, IDEAL_GAS_TEMPERATURE = 3e5, 450.0
 COLDEST_CHECKED = 220.0
@@ -31,10 +32,11 @@ class Limits:
 
 
 def cautions_of(data: AccountInput, figures: Mapping[str, float], limits: Limits) -> tuple[Caution, ...]:
-    """Return the cautions about one setting: `data` of state shape `()`, its `figures` by name."""
+    """Return the cautions about one setting: `data` of one state, its `figures` by name."""
     return (
         *data.fuel.cautions,
         *_fuel_rich(data, figures),
+        *_no_account(figures),
         *_carbon_monoxide(data, figures, limits),
         *_water(data, figures),
         *_acid(data, figures, limits),
@@ -42,9 +44,19 @@ def cautions_of(data: AccountInput, figures: Mapping[str, float], limits: Limits
     )
 
 
+def degrees(kelvin: float, decimals: int = 0) -> str:
+    """Return a temperature [K] for a message, in both units that people read."""
+    celsius = kelvin - 273.15
+    return f"{celsius:.{decimals}f} degC ({celsius * 1.8 + 32:.{decimals}f} degF)"
+
+
+def _number(value: FloatArray | float) -> float:
+    return float(np.asarray(value).flat[0])
+
+
 def _fuel_rich(data: AccountInput, figures: Mapping[str, float]) -> tuple[Caution, ...]:
     air_ratio = figures["air_ratio"]
-    if air_ratio >= 1 - 1e-9:
+    if not air_ratio < 1 - 1e-9:
         return ()
     known = not np.isnan(figures["efficiency.gross"])
     account = (
@@ -61,16 +73,33 @@ def _fuel_rich(data: AccountInput, figures: Mapping[str, float]) -> tuple[Cautio
     return (Caution(code, message, air_ratio, 1.0, "common practice, no source"),)
 
 
-def _carbon_monoxide(data: AccountInput, figures: Mapping[str, float], limits: Limits) -> tuple[Caution, ...]:
-    oxygen, share = figures["flue_gas.dry.O2"], figures["flue_gas.dry.CO"]
-    if np.isnan(share) or share <= 0:
+def _no_account(figures: Mapping[str, float]) -> tuple[Caution, ...]:
+    air_ratio = figures["air_ratio"]
+    if not np.isnan(figures["efficiency.gross"]) or air_ratio < 1 - 1e-9:
         return ()
-    undiluted = float(share * data.air.oxygen / (data.air.oxygen - oxygen))
+    if np.isnan(air_ratio):
+        message = "no account can be given: no reading tells the excess air; give O2, CO2 or the excess air itself"
+        return (Caution("no_account", message, None, None, "element balances"),)
+    message = (
+        "no account can be given: with these readings the fuel and the air would have to leave less than nothing of a "
+        "gas; O2, CO, H2, CH4, NO or the fuel analysis cannot be right"
+    )
+    return (Caution("no_account", message, air_ratio, 1.0, "element balances"),)
+
+
+def _carbon_monoxide(data: AccountInput, figures: Mapping[str, float], limits: Limits) -> tuple[Caution, ...]:
+    share, oxygen = _number(data.readings.co), figures["flue_gas.dry.O2"]
+    if not share > 0:
+        return ()
+    if np.isnan(oxygen):  # no account: what was read, undiluted as a fuel-rich gas is
+        oxygen = 0.0
+    in_air = _number(data.air.oxygen)
+    undiluted = share * in_air / (in_air - oxygen)
     steps = (
         (
             limits.carbon_monoxide_stop,
             "carbon_monoxide_stop",
-            "far above the usual limit: exhaust CO kills; the usual practice is to shut down at once and call a licensed person",
+            "far above the usual limit: exhaust CO kills; usually it is shut down at once and a licensed person called",
         ),
         (
             limits.carbon_monoxide_act,
@@ -93,11 +122,11 @@ def _carbon_monoxide(data: AccountInput, figures: Mapping[str, float], limits: L
 
 
 def _water(data: AccountInput, figures: Mapping[str, float]) -> tuple[Caution, ...]:
-    dew_point, flue = figures["dew_point.water"], float(data.readings.flue_temperature)
+    dew_point, flue = figures["dew_point.water"], _number(data.readings.flue_temperature)
     if np.isnan(dew_point) or flue >= dew_point:
         return ()
     message = (
-        f"the flue gas leaves at {flue - 273.15:.1f} degC, below its water dew point of {dew_point - 273.15:.1f} degC: "
+        f"the flue gas leaves at {degrees(flue, 1)}, below its water dew point of {degrees(dew_point, 1)}: "
         "condense only in units, drains and chimneys built for acid condensate"
     )
     return (Caution("below_water_dew_point", message, flue, dew_point, "IAPWS R7-97"),)
@@ -108,15 +137,15 @@ def _acid(data: AccountInput, figures: Mapping[str, float], limits: Limits) -> t
     if np.isnan(dew_point):
         return ()
     limit = dew_point + ACID_DOUBT
-    places = [("the flue gas", float(data.readings.flue_temperature), "acid_dew_point_gas")]
+    places = [("the flue gas", _number(data.readings.flue_temperature), "acid_dew_point_gas")]
     if limits.metal_temperature is not None:
         places.append(("the coldest metal", limits.metal_temperature, "acid_dew_point_metal"))
     found = []
     for what, temperature, code in places:
         if temperature < limit:
             message = (
-                f"{what} is at {temperature - 273.15:.0f} degC, not clear of the acid dew point of "
-                f"{dew_point - 273.15:.0f} +-5 degC: sulfuric acid may condense and corrode; gas above it does not "
+                f"{what} is at {degrees(temperature)}, not clear of the acid dew point of "
+                f"{degrees(dew_point)} +-5 K: sulfuric acid may condense and corrode; gas above it does not "
                 "mean metal above it"
             )
             found.append(Caution(code, message, temperature, limit, data.acid_correlation))
@@ -125,15 +154,15 @@ def _acid(data: AccountInput, figures: Mapping[str, float], limits: Limits) -> t
 
 def _validity(data: AccountInput, figures: Mapping[str, float]) -> tuple[Caution, ...]:
     found = []
-    pressure, flue = float(data.air.pressure), float(data.readings.flue_temperature)
+    pressure, flue = _number(data.air.pressure), _number(data.readings.flue_temperature)
     if pressure > IDEAL_GAS_PRESSURE and flue < IDEAL_GAS_TEMPERATURE:
-        message = f"at {pressure / 1e5:.3g} bar and {flue - 273.15:.0f} degC the flue gas departs from an ideal gas"
+        message = f"at {pressure / 1e5:.3g} bar and {degrees(flue)} the flue gas departs from an ideal gas"
         found.append(
             Caution("ideal_gas", message, pressure, IDEAL_GAS_PRESSURE, "enthalpy departures of a flue gas, CoolProp")
         )
-    coldest = min(flue, float(data.air.temperature), float(data.fuel_temperature))
+    coldest = min(flue, _number(data.air.temperature), _number(data.fuel_temperature))
     if coldest < COLDEST_CHECKED:
-        message = f"at {coldest:.0f} K the species data are extrapolated below what was checked"
+        message = f"at {degrees(coldest)} the species data are extrapolated below what was checked"
         found.append(Caution("cold_data", message, coldest, COLDEST_CHECKED, "NASA/TP-2002-211556 against CoolProp"))
     efficiency = figures["efficiency.gross"]
     if efficiency <= 0:

@@ -9,15 +9,13 @@ from dataclasses import dataclass
 from functools import cache
 from types import MappingProxyType
 
-import numpy as np
-
 from fluegas.accounting import beside
 from fluegas.accounting.inputs import BASES
 from fluegas.accounting.terms import Terms
 from fluegas.combustion.air import dry_air_molar_mass
 from fluegas.combustion.product_gas import DRY_FLUE_GASES, FLUE_GASES
 from fluegas.thermo.polynomials import FloatArray
-from fluegas.thermo.species import species
+from fluegas.thermo.species import atomic_weight, species
 
 MIXTURE, HEAT_ACCOUNT, BESIDE, LIMITS, EMISSIONS = (
     "mixture",
@@ -88,11 +86,10 @@ def _mixture() -> list[Figure]:
     def wet_share(gas: str) -> Callable[[Terms], FloatArray]:
         return lambda terms: terms.gas.amount(gas) / terms.gas.wet_flue_gas
 
-    def mass_of_gas(terms: Terms) -> FloatArray:
-        mass = np.asarray(terms.gas.water * species("H2O").molar_mass)
-        for gas, amount in terms.gas.dry_amounts.items():
-            mass = mass + amount * species(gas).molar_mass
-        return mass
+    def flue_gas_per_fuel(terms: Terms) -> FloatArray:
+        fuel, carbon = terms.data.fuel, terms.gas.fuel.element("C") - terms.gas.burned_carbon
+        from_fuel = 1.0 - fuel.ash - carbon * atomic_weight("C")
+        return from_fuel + air_per_fuel(terms) + terms.gas.water_from_air * species("H2O").molar_mass
 
     found = [
         Figure(
@@ -118,7 +115,7 @@ def _mixture() -> list[Figure]:
         Figure(
             "air_per_fuel",
             "Dry air per fuel",
-            "ratio",
+            "mass_ratio",
             MIXTURE,
             "Mass of dry air per mass of fuel as fired.",
             _BALANCE,
@@ -128,11 +125,11 @@ def _mixture() -> list[Figure]:
         Figure(
             "flue_gas_per_fuel",
             "Flue gas per fuel",
-            "ratio",
+            "mass_ratio",
             MIXTURE,
-            "Mass of wet flue gas per mass of fuel as fired.",
+            "Mass of wet flue gas, condensate included, per mass of fuel as fired.",
             _BALANCE,
-            mass_of_gas,
+            flue_gas_per_fuel,
         ),
     ]
     for basis, gases, share in (("dry", DRY_FLUE_GASES, dry_share), ("wet", FLUE_GASES, wet_share)):

@@ -5,34 +5,26 @@ from functools import cached_property
 import numpy as np
 
 from fluegas.combustion.product_gas import ProductGas
-from fluegas.thermo.mixture import GasSet
+from fluegas.thermo.mixture import Temperature, gases_above
 from fluegas.thermo.polynomials import FloatArray
 
 
 class FlueHeat:
     """Sensible heat of the flue gas at one temperature [K], per kilogram of fuel [J/kg], all water as vapour."""
 
-    def __init__(self, gas: ProductGas, temperature: FloatArray) -> None:
-        self.gas, self.temperature = gas, np.asarray(temperature, dtype=float)
-
-    @cached_property
-    def _log_temperature(self) -> FloatArray:
-        return np.asarray(np.log(self.temperature))
+    def __init__(self, gas: ProductGas, temperature: Temperature) -> None:
+        self.gas, self.at = gas, temperature
 
     @cached_property
     def dry_gas(self) -> FloatArray:
         """Heat of the dry flue gas."""
-        amounts = self.gas.dry_amounts
-        gases = GasSet(tuple(amounts)).referenced(self.gas.fuel.reference_temperature)
-        return gases.mixture(np.stack(np.broadcast_arrays(*amounts.values()))).enthalpy(
-            self.temperature, self._log_temperature
-        )
+        return self.gas.dry_mixture.enthalpy(self.at)
 
     @cached_property
     def of_vapour(self) -> FloatArray:
         """Heat of one mole of water vapour [J/mol]."""
-        vapour = GasSet.of("H2O").referenced(self.gas.fuel.reference_temperature)
-        return vapour.mixture(np.ones(1)).enthalpy(self.temperature, self._log_temperature)
+        vapour = gases_above(("H2O",), self.gas.fuel.reference_temperature)
+        return vapour.mixture(np.ones(1)).enthalpy(self.at)
 
     @property
     def fuel_water(self) -> FloatArray:

@@ -86,15 +86,17 @@ def with_surface(data: AccountInput, unit: UnitInput) -> AccountInput:
     reference = own[place : place + 1]
     if unit.surface_share is not None:
         share = np.broadcast_to(np.asarray(unit.surface_share, dtype=float), reference.shape)
+        power = share * reference
     else:
-        share = np.broadcast_to(np.asarray(unit.surface_heat, dtype=float) / reference, reference.shape)
+        power = np.broadcast_to(np.asarray(unit.surface_heat, dtype=float), reference.shape)
+        share = power / reference
     baseline = take(data, len(shape), 0, slice(place, place + 1))
     name = f"efficiency.{data.basis}"
     efficiency = heat_account(replace(baseline, surface_share=np.nan_to_num(share)), [name])[name]
     ratio = share / efficiency
     if unit.surface_heat is not None:
         ratio = np.where(np.isnan(ratio), np.asarray(unit.surface_heat) / unit.rated_output, ratio)
-    shares = share * reference / own
+    shares = power / own
     shares[place] = share[0]
     shares = np.where(np.isnan(efficiency), share, shares)
     return replace(data, surface_share=shares, surface_per_useful=ratio)

@@ -7,6 +7,7 @@ All heats are counted from the reference temperature. Useful heat per kilogram o
 so efficiency on either basis is the same useful heat over that basis's heating value.
 """
 
+from collections.abc import Iterable
 from functools import cached_property
 
 import numpy as np
@@ -18,7 +19,7 @@ from fluegas.combustion.fuel import atomic_weights
 from fluegas.combustion.heating_value import molar_heating_values
 from fluegas.combustion.product_gas import ProductGas
 from fluegas.errors import RangeError
-from fluegas.thermo.mixture import GasSet
+from fluegas.thermo.mixture import Temperature, gases_above
 from fluegas.thermo.polynomials import FloatArray
 from fluegas.thermo.species import species
 from fluegas.thermo.water import (
@@ -46,6 +47,11 @@ HEAT_LOSSES = (
 CREDITS = ("air", "air_moisture", "fuel")
 
 
+def total(parts: Iterable[FloatArray]) -> FloatArray:
+    """Return the sum of `parts`, the single numbers among them first, so that zeros cost no pass over an array."""
+    return np.asarray(sum(sorted(parts, key=lambda part: part.size), 0.0))
+
+
 class Terms:
     """The terms of the account for one chunk; every property has the chunk's state shape or broadcasts to it."""
 
@@ -59,9 +65,14 @@ class Terms:
         return self.data.fuel.gross_heating_value if basis == GROSS else self.data.fuel.net_heating_value
 
     @cached_property
+    def air_temperature(self) -> Temperature:
+        """Temperature of the air where its humidity is measured."""
+        return Temperature(self.data.air.temperature, "air temperature")
+
+    @cached_property
     def flue(self) -> FlueHeat:
         """The flue gas where it leaves the boundary."""
-        return FlueHeat(self.gas, self.data.readings.flue_temperature)
+        return FlueHeat(self.gas, Temperature(self.data.readings.flue_temperature, "flue temperature"))
 
     def heat(self, loss: str, basis: str) -> FloatArray:
         """Heat of one of HEAT_LOSSES [J/kg fuel] as counted on `basis`."""
@@ -113,8 +124,8 @@ class Terms:
 
     @cached_property
     def _saturation_rule(self) -> FloatArray:
-        temperature, pressure = self.flue.temperature, self.data.air.pressure
-        if float(np.min(temperature)) >= float(saturation_temperature(np.max(pressure))):
+        temperature, pressure = self.flue.at.kelvin, self.data.air.pressure
+        if self.flue.at.lowest >= float(saturation_temperature(np.max(pressure))):
             return np.zeros(())
         saturated = saturation_pressure(np.minimum(temperature, saturation_temperature(0.99 * pressure)))
         vapour = self.gas.dry_flue_gas * saturated / (pressure - saturated)
@@ -126,20 +137,22 @@ class Terms:
         condensed = self.condensed_water
         if not np.any(condensed):
             return np.zeros(())
-        temperature = np.where(condensed > 0, self.flue.temperature, self.reference)
+        temperature = np.where(condensed > 0, self.flue.at.kelvin, self.reference)
         heat = vapour_enthalpy(temperature) - liquid_enthalpy(temperature)
         return np.asarray(-condensed * heat)
 
     @cached_property
     def credits(self) -> dict[str, FloatArray]:
         """Heat brought in above the reference temperature [J/kg fuel], by the names of CREDITS."""
-        return self.credits_at(self.data.air.at_boundary)
+        air = self.data.air
+        same = air.at_boundary is air.temperature
+        return self.credits_at(self.air_temperature if same else Temperature(air.at_boundary, "burner temperature"))
 
-    def credits_at(self, temperature: FloatArray) -> dict[str, FloatArray]:
-        """Heat brought in with air of this `temperature` [K] and with the fuel [J/kg fuel], by the names of CREDITS."""
+    def credits_at(self, temperature: Temperature) -> dict[str, FloatArray]:
+        """Heat brought in with air of this `temperature` and with the fuel [J/kg fuel], by the names of CREDITS."""
         amounts = dry_air_amounts(1.0, self.data.air.oxygen)
-        dry = GasSet(tuple(amounts)).referenced(self.reference).mixture(np.stack(list(amounts.values())))
-        vapour = GasSet.of("H2O").referenced(self.reference).mixture(np.ones(1))
+        dry = gases_above(tuple(amounts), self.reference).mixture(np.stack(list(amounts.values())))
+        vapour = gases_above(("H2O",), self.reference).mixture(np.ones(1))
         return {
             "air": np.asarray(self.gas.dry_air * dry.enthalpy(temperature)),
             "air_moisture": np.asarray(self.gas.water_from_air * vapour.enthalpy(temperature)),
@@ -149,7 +162,7 @@ class Terms:
     @cached_property
     def total_credit(self) -> FloatArray:
         """All credits [J/kg fuel]."""
-        return np.asarray(sum(self.credits.values()))
+        return total(self.credits.values())
 
     @cached_property
     def other(self) -> dict[str, FloatArray]:
@@ -159,8 +172,8 @@ class Terms:
 
     @cached_property
     def _before_surface(self) -> FloatArray:
-        net = self.heating_value(NET) - sum(self.heat(loss, NET) for loss in HEAT_LOSSES)
-        return np.asarray(net + self.total_credit - sum(self.other.values()))
+        lost = total([*(self.heat(loss, NET) for loss in HEAT_LOSSES), *self.other.values()])
+        return np.asarray(self.heating_value(NET) + self.total_credit - lost)
 
     @cached_property
     def surface(self) -> FloatArray:
@@ -181,7 +194,7 @@ class Terms:
         if name == "surface":
             heat = self.surface
         elif name == "other":
-            heat = np.asarray(sum(self.other.values(), np.zeros(())))
+            heat = total(self.other.values())
         else:
             heat = self.heat(name, basis)
         return heat / self.heating_value(basis)

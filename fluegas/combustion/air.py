@@ -12,7 +12,7 @@ from numpy.typing import ArrayLike
 
 from fluegas.errors import RangeError
 from fluegas.thermo.mixture import GasSet
-from fluegas.thermo.polynomials import FloatArray
+from fluegas.thermo.polynomials import BoolArray, FloatArray
 from fluegas.thermo.species import species
 from fluegas.thermo.water import TRIPLE_POINT, liquid_enthalpy, saturation_pressure, vapour_enthalpy
 
@@ -68,7 +68,7 @@ class Air:
     dew_point: FloatArray | None = None
     oxygen: FloatArray | float = OXYGEN_IN_AIR
     burner_temperature: FloatArray | None = None
-    preheated_outside: FloatArray | bool = False
+    preheated_outside: BoolArray | bool = False
 
     @cached_property
     def water_ratio(self) -> FloatArray:
@@ -81,7 +81,8 @@ class Air:
         )
         for given, ratio_from in forms:
             if given is not None:
-                ratio = np.where(np.isnan(given), ratio, ratio_from(self, given))
+                absent = np.isnan(given)
+                ratio = np.where(absent, ratio, ratio_from(self, given)) if np.any(absent) else ratio_from(self, given)
         return ratio
 
     @cached_property
@@ -94,11 +95,13 @@ class Air:
     @cached_property
     def at_boundary(self) -> FloatArray:
         """Temperature at which the air crosses the balance boundary [K]."""
+        if not np.any(self.preheated_outside):
+            return self.temperature
         return np.where(self.preheated_outside, self.at_burner, self.temperature)
 
 
 def _ratio(vapour_pressure: FloatArray, pressure: FloatArray) -> FloatArray:
-    if not np.all(vapour_pressure < 0.9 * pressure):
+    if np.any(vapour_pressure >= 0.9 * pressure):
         worst = float(
             np.max(np.broadcast_to(vapour_pressure / pressure, np.broadcast(vapour_pressure, pressure).shape))
         )
@@ -107,18 +110,24 @@ def _ratio(vapour_pressure: FloatArray, pressure: FloatArray) -> FloatArray:
 
 
 def _from_relative(air: Air, humidity: FloatArray) -> FloatArray:
-    return _ratio(np.nan_to_num(humidity) * saturation_pressure(air.temperature), air.pressure)
+    outside = (humidity < 0) | (humidity > 1)
+    if np.any(outside):
+        raise RangeError("relative humidity", float(np.asarray(humidity)[outside].flat[0]), 0.0, 1.0)
+    missing = np.isnan(humidity)
+    temperature = np.where(missing, TRIPLE_POINT, air.temperature)
+    return _ratio(np.where(missing, 0.0, humidity) * saturation_pressure(temperature), air.pressure)
 
 
 def _from_dew_point(air: Air, dew_point: FloatArray) -> FloatArray:
-    point = np.where(np.isnan(dew_point), air.temperature, dew_point)
+    point = np.where(np.isnan(dew_point), np.minimum(air.temperature, TRIPLE_POINT), dew_point)
     _not_above_air(point, air, "dew point of the air")
     return _ratio(saturation_pressure(point), air.pressure)
 
 
 def _from_wet_bulb(air: Air, wet_bulb: FloatArray) -> FloatArray:
     """Adiabatic saturation: air and its vapour at T, plus the water taken up at T_wb, leave saturated at T_wb."""
-    bulb = np.where(np.isnan(wet_bulb), np.maximum(air.temperature, TRIPLE_POINT), wet_bulb)
+    missing = np.isnan(wet_bulb)
+    bulb = np.where(missing, TRIPLE_POINT, wet_bulb)
     if not np.all(bulb >= TRIPLE_POINT):
         raise RangeError(
             "wet-bulb temperature",
@@ -127,15 +136,15 @@ def _from_wet_bulb(air: Air, wet_bulb: FloatArray) -> FloatArray:
             unit="K",
             source="an iced bulb reads otherwise",
         )
-    if not np.all(np.isnan(wet_bulb)):
-        _not_above_air(np.where(np.isnan(wet_bulb), air.temperature, wet_bulb), air, "wet-bulb temperature")
+    _not_above_air(np.where(missing, air.temperature, wet_bulb), air, "wet-bulb temperature")
     saturated = _ratio(saturation_pressure(bulb), air.pressure)
     dry = GasSet(DRY_AIR_GASES).mixture(np.stack(list(dry_air_amounts(1.0, air.oxygen).values())))
     water = liquid_enthalpy(bulb)
     taken = saturated * (vapour_enthalpy(bulb) - water) - dry.enthalpy_change(bulb, air.temperature)
     ratio: FloatArray = taken / (vapour_enthalpy(air.temperature) - water)
-    if not np.all(np.isnan(wet_bulb) | (ratio >= 0)):
-        raise RangeError("humidity ratio from the wet bulb [mol/mol]", float(np.min(ratio)), low=0.0)
+    if not np.all(missing | (ratio >= 0)):
+        least = float(np.min(np.where(missing, np.inf, ratio)))
+        raise RangeError("humidity ratio from the wet bulb [mol/mol]", least, low=0.0)
     return ratio
 
 

@@ -10,7 +10,7 @@ import numpy as np
 
 from fluegas.combustion.air import DRY_AIR_GASES, dry_air_amounts, dry_air_molar_mass
 from fluegas.combustion.product_gas import ProductGas
-from fluegas.thermo.mixture import GasSet, Mixture
+from fluegas.thermo.mixture import Temperature, gases_above
 from fluegas.thermo.polynomials import FloatArray
 from fluegas.thermo.temperature import temperature_from_enthalpy
 
@@ -43,11 +43,13 @@ def complete_products(gas: ProductGas) -> FloatArray:
     return np.stack(np.broadcast_arrays(*amounts))
 
 
-def air_mixture(gas: ProductGas) -> Mixture:
-    """Return the humid air per kilogram of fuel, enthalpy counted from the fuel's reference temperature."""
-    amounts = (*dry_air_amounts(gas.dry_air, gas.air.oxygen).values(), gas.water_from_air)
-    gases = GasSet((*DRY_AIR_GASES, "H2O")).referenced(gas.fuel.reference_temperature)
-    return gases.mixture(np.stack(np.broadcast_arrays(*amounts)))
+def heat_of_air(gas: ProductGas) -> FloatArray:
+    """Return the heat of the humid air at the burner above the reference temperature [J/kg fuel]."""
+    at = Temperature(gas.air.at_burner, "air temperature at the burner")
+    one_mole = dry_air_amounts(1.0, gas.air.oxygen)
+    dry = gases_above(DRY_AIR_GASES, gas.fuel.reference_temperature).mixture(np.stack(list(one_mole.values())))
+    vapour = gases_above(("H2O",), gas.fuel.reference_temperature).mixture(np.ones(1))
+    return np.asarray(gas.dry_air * dry.enthalpy(at) + gas.water_from_air * vapour.enthalpy(at))
 
 
 def complete_flame_temperature(
@@ -64,10 +66,11 @@ def complete_flame_temperature(
     """
     amounts = complete_products(gas)
     lean = amounts[-1] >= -1e-7 * gas.theoretical_oxygen
-    products_set = GasSet(COMPLETE_PRODUCTS).referenced(gas.fuel.reference_temperature)
-    products = products_set.mixture(np.maximum(amounts, 0.0))
+    np.maximum(amounts[-1:], 0.0, out=amounts[-1:])
+    products_set = gases_above(COMPLETE_PRODUCTS, gas.fuel.reference_temperature)
+    products = products_set.mixture(amounts)
     heat = gas.fuel.net_heating_value - unburned_heat + gas.fuel.sensible_heat(fuel_temperature)
-    heat = heat + air_mixture(gas).enthalpy(gas.air.at_burner)
+    heat = heat + heat_of_air(gas)
     if recirculation is not None:
         product_mass = np.tensordot(products_set.molar_mass, amounts, 1)
         air_mass = dry_air_molar_mass(gas.air.oxygen) * gas.dry_air

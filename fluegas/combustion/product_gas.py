@@ -19,11 +19,15 @@ import numpy as np
 from fluegas.combustion.air import Air, dry_air_amounts
 from fluegas.combustion.fuel import Fuel, oxygen_of_rest
 from fluegas.errors import RangeError
+from fluegas.thermo.mixture import Mixture, gases_above
 from fluegas.thermo.polynomials import BoolArray, FloatArray
 
 FLUE_GASES = ("CO2", "CO", "H2", "CH4", "NO", "SO2", "HCl", "N2", "Ar", "He", "O2", "H2O")
 """Gases that the flue may hold, in the order in which tables show them."""
 DRY_FLUE_GASES = FLUE_GASES[:-1]
+
+_FROM_FUEL = {"SO2": "S", "HCl": "Cl", "He": "He"}
+"""Flue gases of which each molecule holds one atom of an element that only the fuel brings."""
 
 SUPPLY_READINGS = ("o2", "o2_wet", "co2", "excess_air")
 
@@ -51,7 +55,7 @@ class FlueReadings:
     no: FloatArray | float = 0.0
     unburned_carbon: FloatArray | float = 0.0
     chamber_temperature: FloatArray | None = None
-    rich_gases_read: FloatArray | bool = False
+    rich_gases_read: BoolArray | bool = False
 
 
 class ProductGas:
@@ -133,9 +137,14 @@ class ProductGas:
 
     @cached_property
     def is_unknown(self) -> BoolArray:
-        """True where the account cannot be worked out: fuel-rich without CO and H2 readings, or oxygen below zero."""
-        rich = (self.excess_air < -1e-9) & ~np.asarray(self.readings.rich_gases_read)
-        return np.asarray(rich | (self.oxygen_left < -1e-7 * self.theoretical_oxygen))
+        """True where the account cannot be worked out: fuel-rich without CO and H2 readings, or a gas below zero."""
+        unknown = (self.excess_air < -1e-9) & ~np.asarray(self.readings.rich_gases_read)
+        least = -1e-7 * self.theoretical_oxygen
+        unknown = unknown | (self.oxygen_left < least)
+        if np.any(self._oxygen_debt) or np.any(self.readings.no):
+            for amount in (self.amount("CO2"), self.amount("N2"), self.water_from_fuel):
+                unknown = unknown | (amount < least)
+        return np.asarray(unknown)
 
     @cached_property
     def water_from_air(self) -> FloatArray:
@@ -161,11 +170,11 @@ class ProductGas:
 
     @cached_property
     def dry_amounts(self) -> dict[str, FloatArray]:
-        """Amounts of the dry flue gases that are there [mol/kg fuel], by symbol."""
+        """Amounts of the dry flue gases that can be there [mol/kg fuel], by symbol."""
         r, element, dry = self.readings, self.fuel.element, self.dry_flue_gas
         air = dry_air_amounts(self.dry_air, self.air.oxygen)
         measured = {"CO": r.co, "H2": r.h2, "CH4": r.ch4, "NO": r.no}
-        unburnt = {gas: np.asarray(share) * dry for gas, share in measured.items() if np.any(share)}
+        unburnt = {gas: np.asarray(share * dry) for gas, share in measured.items() if np.any(share)}
         carbon_dioxide = self.burned_carbon + air["CO2"]
         nitrogen = element("N") / 2 + air["N2"]
         for gas in ("CO", "CH4"):
@@ -173,9 +182,22 @@ class ProductGas:
                 carbon_dioxide = carbon_dioxide - unburnt[gas]
         if "NO" in unburnt:
             nitrogen = nitrogen - unburnt["NO"] / 2
-        amounts = {"CO2": carbon_dioxide, **unburnt, "SO2": element("S"), "HCl": element("Cl"), "N2": nitrogen}
-        amounts |= {"Ar": element("Ar") + air["Ar"], "He": element("He"), "O2": self.oxygen_left}
-        return {gas: np.asarray(amount) for gas, amount in amounts.items() if np.any(amount)}
+        from_fuel = {gas: element(symbol) for gas, symbol in _FROM_FUEL.items() if np.any(element(symbol))}
+        return {
+            "CO2": carbon_dioxide,
+            **unburnt,
+            **from_fuel,
+            "N2": nitrogen,
+            "Ar": element("Ar") + air["Ar"],
+            "O2": self.oxygen_left,
+        }
+
+    @cached_property
+    def dry_mixture(self) -> Mixture:
+        """The dry flue gas per kilogram of fuel, enthalpy counted from the fuel's reference temperature."""
+        amounts = self.dry_amounts
+        gases = gases_above(tuple(amounts), self.fuel.reference_temperature)
+        return gases.mixture(np.stack(np.broadcast_arrays(*amounts.values())))
 
     def amount(self, gas: str) -> FloatArray:
         """Return the amount of one of FLUE_GASES [mol/kg fuel], zero if there is none."""

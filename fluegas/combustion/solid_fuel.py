@@ -75,7 +75,7 @@ def solid_fuel(
     stated, cautions = _gross_of_basis(
         elements,
         water,
-        to_dry,
+        np.asarray(dry_ash),
         analysis_basis,
         gross_heating_value,
         net_heating_value,
@@ -143,7 +143,7 @@ def _to_dry(basis: str, total: FloatArray, moisture: FloatArray, ash: FloatArray
 def _gross_of_basis(
     elements: FloatArray,
     water: FloatArray,
-    to_dry: FloatArray,
+    dry_ash: FloatArray,
     basis: str,
     gross: ArrayLike | None,
     net: ArrayLike | None,
@@ -153,7 +153,7 @@ def _gross_of_basis(
     """Return the stated gross value at constant pressure per kg dry (None if none was stated) and cautions."""
     if gross is None and net is None:
         return None, ()
-    per_dry = _value_scale(basis, water, to_dry)
+    per_dry = _value_scale(basis, water, dry_ash)
     hydrogen = elements[1]
     moisture = water * per_dry if basis == AS_FIRED else np.zeros(np.shape(water))
     expansion = GAS_CONSTANT * reference_temperature * (hydrogen / 2 + moisture) if at_constant_volume else 0.0
@@ -169,12 +169,12 @@ def _gross_of_basis(
     return value, cautions
 
 
-def _value_scale(basis: str, water: FloatArray, to_dry: FloatArray) -> FloatArray:
+def _value_scale(basis: str, water: FloatArray, dry_ash: FloatArray) -> FloatArray:
     """Return kilograms of the analysis basis per kilogram dry."""
     if basis == AS_FIRED:
         scale: FloatArray = 1 / (1 - water * species("H2O").molar_mass)
         return scale
-    return to_dry if basis == DRY_ASH_FREE else np.ones(np.shape(to_dry))
+    return 1 - dry_ash if basis == DRY_ASH_FREE else np.ones(np.shape(dry_ash))
 
 
 def with_moisture(fuel: Fuel, moisture: ArrayLike) -> Fuel:
@@ -190,7 +190,8 @@ def with_moisture(fuel: Fuel, moisture: ArrayLike) -> Fuel:
     molar_mass = species("H2O").molar_mass
     old = fuel.moisture * molar_mass
     scale = (1 - new) / (1 - old)
-    elements = fuel.elements * scale
+    missing_axes = max(scale.ndim + 1 - fuel.elements.ndim, 0)
+    elements = fuel.elements.reshape(len(ELEMENTS), *(1,) * missing_axes, *fuel.elements.shape[1:]) * scale
     gross = fuel.gross_heating_value * scale
     water = new / molar_mass
     dry_capacity = (fuel.heat_capacity - WATER_HEAT_CAPACITY * old) / (1 - old)

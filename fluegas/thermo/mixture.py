@@ -5,8 +5,8 @@ The polynomials of the species data are linear in their coefficients. A mixture 
 the amounts put in; entropies are at the standard pressure of 1 bar.
 """
 
-from collections.abc import Sequence
-from functools import lru_cache
+from collections.abc import Callable, Sequence
+from functools import cached_property, lru_cache
 from typing import Self
 
 import numpy as np
@@ -25,61 +25,83 @@ JOINT = 1000.0
 _SOURCE = "range of the species data, NASA/TP-2002-211556"
 
 
-def check_temperature(temperature: FloatArray, what: str = "temperature") -> None:
-    """Raise RangeError unless every temperature [K] lies within the species data."""
-    if temperature.size == 0:
-        return
-    low, high = float(np.min(temperature)), float(np.max(temperature))
-    if not low >= LOWEST_TEMPERATURE:
-        raise RangeError(what, low, LOWEST_TEMPERATURE, HIGHEST_TEMPERATURE, unit="K", source=_SOURCE)
-    if not high <= HIGHEST_TEMPERATURE:
-        raise RangeError(what, high, LOWEST_TEMPERATURE, HIGHEST_TEMPERATURE, unit="K", source=_SOURCE)
+class Temperature:
+    """Temperatures [K] with what is asked of them more than once: their extremes and their logarithm.
+
+    Wherever a temperature is asked for, an array will do; handing in the same Temperature again saves the work.
+
+    Raises RangeError unless every one lies within the species data.
+    """
+
+    def __init__(self, kelvin: ArrayLike, what: str = "temperature") -> None:
+        self.kelvin = np.asarray(kelvin, dtype=float)
+        self.lowest = float(np.min(self.kelvin, initial=np.inf))
+        self.highest = float(np.max(self.kelvin, initial=-np.inf))
+        if self.kelvin.size == 0:
+            return
+        for extreme in (self.lowest, self.highest):
+            if not LOWEST_TEMPERATURE <= extreme <= HIGHEST_TEMPERATURE:
+                raise RangeError(what, extreme, LOWEST_TEMPERATURE, HIGHEST_TEMPERATURE, unit="K", source=_SOURCE)
+
+    @cached_property
+    def log(self) -> FloatArray:
+        """Natural logarithm of the temperatures."""
+        return np.asarray(np.log(self.kelvin))
+
+    @classmethod
+    def of(cls, temperature: "ArrayLike | Temperature") -> "Temperature":
+        """Return `temperature` itself if it is one, else make it one."""
+        return temperature if isinstance(temperature, Temperature) else cls(temperature)
 
 
 class Mixture:
     """Gases with fixed amounts: composite coefficients of shape `(9, ...)` for the ranges below and above 1000 K.
 
     Amounts in mol (per kilogram of fuel, say) give heats in J (per kilogram of fuel). Temperatures broadcast against
-    the amounts. `log_temperature` may be handed in where the caller has it, since the logarithm is the dearest part.
+    the amounts.
     """
 
-    def __init__(self, low: FloatArray, high: FloatArray) -> None:
-        self.low, self.high = low, high
+    def __init__(self, low: Callable[[], FloatArray], high: Callable[[], FloatArray]) -> None:
+        self._make_low, self._make_high = low, high
 
-    def heat_capacity(self, temperature: ArrayLike) -> FloatArray:
+    @cached_property
+    def low(self) -> FloatArray:
+        """Coefficients up to 1000 K, made when first needed."""
+        return self._make_low()
+
+    @cached_property
+    def high(self) -> FloatArray:
+        """Coefficients above 1000 K, made when first needed."""
+        return self._make_high()
+
+    def heat_capacity(self, temperature: ArrayLike | Temperature) -> FloatArray:
         """Return cp [J/K] at `temperature` [K]. Raises RangeError outside 200 to 6000 K."""
-        t = np.asarray(temperature, dtype=float)
-        check_temperature(t)
-        return self._by_range(polynomials.heat_capacity, t, None)
+        return self._by_range(polynomials.heat_capacity, Temperature.of(temperature))
 
-    def enthalpy(self, temperature: ArrayLike, log_temperature: FloatArray | None = None) -> FloatArray:
+    def enthalpy(self, temperature: ArrayLike | Temperature) -> FloatArray:
         """Return the enthalpy [J] at `temperature` [K]. Raises RangeError outside 200 to 6000 K."""
-        t = np.asarray(temperature, dtype=float)
-        check_temperature(t)
-        return self._by_range(polynomials.enthalpy, t, log_temperature)
+        return self._by_range(polynomials.enthalpy, Temperature.of(temperature))
 
-    def enthalpy_change(self, start: ArrayLike, end: ArrayLike) -> FloatArray:
+    def enthalpy_change(self, start: ArrayLike | Temperature, end: ArrayLike | Temperature) -> FloatArray:
         """Return the heat [J] that warms the mixture from `start` to `end` [K] at constant pressure."""
         return self.enthalpy(end) - self.enthalpy(start)
 
-    def entropy(self, temperature: ArrayLike, log_temperature: FloatArray | None = None) -> FloatArray:
+    def entropy(self, temperature: ArrayLike | Temperature) -> FloatArray:
         """Return the entropy [J/K] of the unmixed gases, each at 1 bar, at `temperature` [K]."""
-        t = np.asarray(temperature, dtype=float)
-        check_temperature(t)
-        return self._by_range(polynomials.entropy, t, log_temperature)
+        return self._by_range(polynomials.entropy, Temperature.of(temperature))
 
-    def gibbs_energy(self, temperature: ArrayLike) -> FloatArray:
+    def gibbs_energy(self, temperature: ArrayLike | Temperature) -> FloatArray:
         """Return the Gibbs energy h - T s [J] of the unmixed gases, each at 1 bar, at `temperature` [K]."""
-        t = np.asarray(temperature, dtype=float)
-        log_t = np.log(t)
-        return self.enthalpy(t, log_t) - t * self.entropy(t, log_t)
+        at = Temperature.of(temperature)
+        return self.enthalpy(at) - at.kelvin * self.entropy(at)
 
-    def _by_range(self, formula: Formula, t: FloatArray, log_t: FloatArray | None) -> FloatArray:
-        if t.size == 0 or float(np.max(t)) <= JOINT:
-            return formula(self.low, t, log_t)
-        if float(np.min(t)) > JOINT:
-            return formula(self.high, t, log_t)
-        return np.where(t <= JOINT, formula(self.low, t, log_t), formula(self.high, t, log_t))
+    def _by_range(self, formula: Formula, at: Temperature) -> FloatArray:
+        if at.highest <= JOINT:
+            return formula(self.low, at.kelvin, at.log)
+        if at.lowest > JOINT:
+            return formula(self.high, at.kelvin, at.log)
+        cold, hot = (formula(k, at.kelvin, at.log) for k in (self.low, self.high))
+        return np.where(at.kelvin <= JOINT, cold, hot)
 
 
 class GasSet:
@@ -109,24 +131,24 @@ class GasSet:
 
     def referenced(self, temperature: float) -> "GasSet":
         """Return the same gases with enthalpies counted from `temperature` [K]: no formation, zero there."""
-        return _referenced(self.symbols, float(temperature))
+        return gases_above(self.symbols, float(temperature))
 
     def mixture(self, amounts: ArrayLike) -> Mixture:
         """Return the mixture with `amounts` of shape `(n, ...)` [mol]."""
         n = np.asarray(amounts, dtype=float)
         flat = n.reshape(n.shape[0], -1)
         shape = (9, *n.shape[1:])
-        return Mixture((self._low @ flat).reshape(shape), (self._high @ flat).reshape(shape))
+        return Mixture(lambda: (self._low @ flat).reshape(shape), lambda: (self._high @ flat).reshape(shape))
 
     def each(self, dimensions: int = 0) -> Mixture:
         """Return one mole of each gas: coefficients `(9, n, 1, ...)` with `dimensions` axes for the states behind."""
         shape = (9, len(self.symbols), *(1,) * dimensions)
-        return Mixture(self._low.reshape(shape), self._high.reshape(shape))
+        return Mixture(lambda: self._low.reshape(shape), lambda: self._high.reshape(shape))
 
-    def enthalpies(self, temperature: ArrayLike) -> FloatArray:
+    def enthalpies(self, temperature: ArrayLike | Temperature) -> FloatArray:
         """Return the molar enthalpy of each gas [J/mol], shape `(n, ...)`, at `temperature` [K] of shape `(...)`."""
-        t = np.asarray(temperature, dtype=float)
-        return self.each(t.ndim).enthalpy(t)
+        at = Temperature.of(temperature)
+        return self.each(at.kelvin.ndim).enthalpy(at)
 
     @classmethod
     def of(cls, *symbols: str) -> Self:
@@ -135,6 +157,7 @@ class GasSet:
 
 
 @lru_cache(maxsize=256)
-def _referenced(symbols: tuple[str, ...], temperature: float) -> GasSet:
+def gases_above(symbols: tuple[str, ...], temperature: float) -> GasSet:
+    """Return the gases named with enthalpies counted from `temperature` [K]; made once for each call's arguments."""
     offsets = GasSet(symbols).enthalpies(temperature)
     return GasSet(symbols, offsets)

@@ -15,7 +15,7 @@ from numpy.typing import ArrayLike, NDArray
 
 FloatArray = NDArray[np.float64]
 BoolArray = NDArray[np.bool_]
-Formula = Callable[[FloatArray, FloatArray, FloatArray | None], FloatArray]
+Formula = Callable[[FloatArray, FloatArray, FloatArray], FloatArray]
 
 _FACTORS = np.array([-1.0, 1.0, 1.0, 1 / 2, 1 / 3, 1 / 4, 1 / 5, 1.0, 1.0])
 
@@ -26,13 +26,13 @@ def from_published(coefficients: ArrayLike) -> FloatArray:
     return rows.T
 
 
-def enthalpy(k: FloatArray, t: FloatArray, log_t: FloatArray | None) -> FloatArray:
-    """Return h [J] from coefficients `k` of shape `(9, ...)` at `t` [K]; `log_t` is ln t, worked out here if None."""
+def enthalpy(k: FloatArray, t: FloatArray, log_t: FloatArray) -> FloatArray:
+    """Return h [J] from coefficients `k` of shape `(9, ...)` at `t` [K]; `log_t` is ln t."""
     h: FloatArray = np.asarray(k[6] * t)
     for row in (5, 4, 3, 2):
         h = _multiply_add(h, k[row], t)
     h = h + k[0] / t
-    h += k[1] * (np.log(t) if log_t is None else log_t)
+    h += k[1] * log_t
     h += k[7]
     return h
 
@@ -44,16 +44,15 @@ def _multiply_add(value: FloatArray, addend: FloatArray, t: FloatArray) -> Float
     return value
 
 
-def heat_capacity(k: FloatArray, t: FloatArray, log_t: FloatArray | None) -> FloatArray:
+def heat_capacity(k: FloatArray, t: FloatArray, log_t: FloatArray) -> FloatArray:
     """Return cp = dh/dT [J/K]; arguments as of `enthalpy`."""
     del log_t  # dh/dT has no logarithm
     cp: FloatArray = (k[1] - k[0] / t) / t + k[2] + t * (2 * k[3] + t * (3 * k[4] + t * (4 * k[5] + t * (5 * k[6]))))
     return cp
 
 
-def entropy(k: FloatArray, t: FloatArray, log_t: FloatArray | None) -> FloatArray:
+def entropy(k: FloatArray, t: FloatArray, log_t: FloatArray) -> FloatArray:
     """Return s [J/K] at 1 bar; arguments as of `enthalpy`."""
-    log = np.log(t) if log_t is None else log_t
     polynomial: FloatArray = t * (2 * k[3] + t * (1.5 * k[4] + t * (4 / 3 * k[5] + t * (1.25 * k[6]))))
-    s: FloatArray = (0.5 * k[0] / t - k[1]) / t + k[2] * log + polynomial + k[8]
+    s: FloatArray = (0.5 * k[0] / t - k[1]) / t + k[2] * log_t + polynomial + k[8]
     return s

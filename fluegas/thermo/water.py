@@ -56,7 +56,8 @@ def saturation_temperature(pressure: ArrayLike) -> FloatArray:
     Raises RangeError outside the pressures that belong to 190 K and to the critical point.
     """
     p = np.asarray(pressure, dtype=float)
-    _check("partial pressure of water", p, float(_over_ice(np.array(_LOWEST_ICE))), 22.064e6, "Pa")
+    low, high = float(_over_ice(np.array(_LOWEST_ICE))), float(_over_liquid(np.array(CRITICAL_POINT)))
+    _check("partial pressure of water", p, low, high, "Pa")
     if p.size and float(np.min(p)) >= _TRIPLE_PRESSURE:
         return _liquid_temperature(p)
     return np.where(
@@ -122,9 +123,8 @@ def _vapour() -> GasSet:
 
 def vapour_enthalpy(temperature: ArrayLike) -> FloatArray:
     """Return the molar enthalpy of water vapour [J/mol], formation included, at `temperature` [K]."""
-    t = np.asarray(temperature, dtype=float)
-    enthalpy_of_one: FloatArray = _vapour().enthalpies(t)[0]
-    return enthalpy_of_one
+    molar: FloatArray = _vapour().enthalpies(temperature)[0]
+    return molar
 
 
 def liquid_enthalpy(temperature: ArrayLike) -> FloatArray:
@@ -139,7 +139,7 @@ def liquid_enthalpy(temperature: ArrayLike) -> FloatArray:
         extreme = float(np.min(t)) if not float(np.min(t)) >= lowest else float(np.max(t))
         raise RangeError("temperature of liquid water", extreme, lowest, highest, unit="K", source=liquid.source)
     cold, hot = from_published(liquid.coefficients).T
-    return np.where(t <= joint, enthalpy(cold, t, None), enthalpy(hot, t, None))
+    return np.where(t <= joint, enthalpy(cold, t, np.log(t)), enthalpy(hot, t, np.log(t)))
 
 
 def heat_of_evaporation(temperature: ArrayLike) -> FloatArray:
