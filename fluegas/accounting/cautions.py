@@ -123,8 +123,16 @@ def _carbon_monoxide(data: AccountInput, figures: Mapping[str, float], limits: L
 
 def _water(data: AccountInput, figures: Mapping[str, float]) -> tuple[Caution, ...]:
     dew_point, flue = figures["dew_point.water"], _number(data.readings.flue_temperature)
-    if np.isnan(dew_point) or flue >= dew_point:
+    if np.isnan(dew_point):
         return ()
+    if flue >= dew_point:
+        if data.condensate is None or not _number(data.condensate) > 0:
+            return ()
+        message = (
+            f"condensate was measured, but the flue gas leaves at {degrees(flue, 1)}, above its water dew point of "
+            f"{degrees(dew_point, 1)}: it condensed on colder walls, or a reading is wrong"
+        )
+        return (Caution("condensate_above_dew_point", message, flue, dew_point, "IAPWS R7-97"),)
     message = (
         f"the flue gas leaves at {degrees(flue, 1)}, below its water dew point of {degrees(dew_point, 1)}: "
         "condense only in units, drains and chimneys built for acid condensate"

@@ -76,7 +76,8 @@ def ledger(data: AccountInput, unit: UnitInput, outputs: Sequence[str] | None = 
 def with_surface(data: AccountInput, unit: UnitInput) -> AccountInput:
     """Return `data` with the surface loss of every setting worked out from the baseline's.
 
-    Where the baseline itself cannot be worked out, every setting takes its share.
+    Where the baseline has no useful heat or cannot be worked out, settings without a heat input of their own take its
+    share.
     """
     if unit.surface_share is None and unit.surface_heat is None:
         return data
@@ -98,7 +99,7 @@ def with_surface(data: AccountInput, unit: UnitInput) -> AccountInput:
         ratio = np.where(np.isnan(ratio), np.asarray(unit.surface_heat) / unit.rated_output, ratio)
     shares = power / own
     shares[place] = share[0]
-    shares = np.where(np.isnan(efficiency), share, shares)
+    shares = np.where(np.isnan(shares) & ~(efficiency > 0), share, shares)
     return replace(data, surface_share=shares, surface_per_useful=ratio)
 
 

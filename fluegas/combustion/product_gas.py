@@ -61,11 +61,22 @@ class FlueReadings:
 class ProductGas:
     """What leaves for each kilogram of fuel: amounts in mol/kg, worked out when first asked for.
 
-    Raises RangeError, when asked, for O2 at or above the oxidant's share and for CO2 below the air's own.
+    Raises RangeError for a share that is negative or not below 1 and, when asked, for O2 at or above the oxidant's
+    share and for CO2 below the air's own.
     """
 
     def __init__(self, fuel: Fuel, air: Air, readings: FlueReadings) -> None:
         self.fuel, self.air, self.readings = fuel, air, readings
+        for what, share in (
+            ("CO in the flue gas", readings.co),
+            ("H2 in the flue gas", readings.h2),
+            ("CH4 in the flue gas", readings.ch4),
+            ("NO in the flue gas", readings.no),
+            ("share of carbon that does not burn", readings.unburned_carbon),
+        ):
+            low, high = np.min(share, initial=0.0), np.max(share, initial=0.0)
+            if low < 0 or high >= 1:
+                raise RangeError(what, float(low if low < 0 else high), low=0.0, high=1.0, source="a share of a whole")
 
     @cached_property
     def burned_carbon(self) -> FloatArray:
@@ -141,9 +152,13 @@ class ProductGas:
         unknown = (self.excess_air < -1e-9) & ~np.asarray(self.readings.rich_gases_read)
         least = -1e-7 * self.theoretical_oxygen
         unknown = unknown | (self.oxygen_left < least)
-        if np.any(self._oxygen_debt) or np.any(self.readings.no):
-            for amount in (self.amount("CO2"), self.amount("N2"), self.water_from_fuel):
-                unknown = unknown | (amount < least)
+        r = self.readings
+        if np.any(r.co) or np.any(r.ch4):
+            unknown = unknown | (self.amount("CO2") < least)
+        if np.any(r.h2) or np.any(r.ch4):
+            unknown = unknown | (self.water_from_fuel < least)
+        if np.any(r.no):
+            unknown = unknown | (self.amount("N2") < least)
         return np.asarray(unknown)
 
     @cached_property

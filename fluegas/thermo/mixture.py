@@ -138,7 +138,9 @@ class GasSet:
         n = np.asarray(amounts, dtype=float)
         flat = n.reshape(n.shape[0], -1)
         shape = (9, *n.shape[1:])
-        return Mixture(lambda: (self._low @ flat).reshape(shape), lambda: (self._high @ flat).reshape(shape))
+        return Mixture(
+            lambda: _composite(self._low, flat).reshape(shape), lambda: _composite(self._high, flat).reshape(shape)
+        )
 
     def each(self, dimensions: int = 0) -> Mixture:
         """Return one mole of each gas: coefficients `(9, n, 1, ...)` with `dimensions` axes for the states behind."""
@@ -154,6 +156,25 @@ class GasSet:
     def of(cls, *symbols: str) -> Self:
         """Return the set of the gases named, `GasSet.of("N2", "O2")`."""
         return cls(symbols)
+
+
+_BLOCK_WORK = 500_000
+"""Multiplications in one matrix product: few enough that no linear-algebra library starts threads for it. On so narrow
+a matrix they cost more than they save, and much more on a busy machine."""
+
+
+def _composite(coefficients: FloatArray, amounts: FloatArray) -> FloatArray:
+    """Return coefficients (9, n) times amounts (n, states), in blocks of states."""
+    rows, gases = coefficients.shape
+    states = amounts.shape[1]
+    block = max(1, _BLOCK_WORK // (rows * max(1, gases)))
+    if states <= block:
+        return coefficients @ amounts
+    product = np.empty((rows, states))
+    for start in range(0, states, block):
+        part = slice(start, start + block)
+        product[:, part] = coefficients @ amounts[:, part]
+    return product
 
 
 @lru_cache(maxsize=256)

@@ -49,10 +49,12 @@ def temperature_from_enthalpy(mixture: Mixture, enthalpy: ArrayLike) -> FloatArr
 
 def _part(mixture: Mixture, known: BoolArray) -> Mixture:
     """Return the mixtures of the states that are `known`, on one axis."""
-    shape = (9, *known.shape)
-    return Mixture(
-        lambda: np.broadcast_to(mixture.low, shape)[:, known], lambda: np.broadcast_to(mixture.high, shape)[:, known]
-    )
+
+    def part(k: FloatArray) -> FloatArray:
+        aligned = k.reshape(9, *(1,) * (known.ndim + 1 - k.ndim), *k.shape[1:])
+        return np.broadcast_to(aligned, (9, *known.shape))[:, known]
+
+    return Mixture(lambda: part(mixture.low), lambda: part(mixture.high))
 
 
 def _bracketed(mixture: Mixture, target: FloatArray, start: FloatArray, settled: BoolArray) -> FloatArray:
@@ -70,9 +72,11 @@ def _bracketed(mixture: Mixture, target: FloatArray, start: FloatArray, settled:
         error = mixture.enthalpy(at) - target
         above = np.where(error > 0, t, above)
         below = np.where(error <= 0, t, below)
-        new = t - error / mixture.heat_capacity(at)
-        new = np.where((new > below) & (new < above) | (error == 0), new, 0.5 * (below + above))
-        now_settled = np.abs(new - t) <= _LAST_STEP * t
+        step = error / mixture.heat_capacity(at)
+        new = t - step
+        now_settled = np.abs(step) <= _LAST_STEP * t
+        inside = (new > below) & (new < above)
+        new = np.where(now_settled, np.clip(new, below, above), np.where(inside, new, 0.5 * (below + above)))
         t = np.where(settled, t, new)
         settled = settled | now_settled
         if np.all(settled):
