@@ -19,7 +19,7 @@ from fluegas.accounting.terms import Terms
 from fluegas.errors import InputError
 from fluegas.thermo.polynomials import FloatArray
 
-CHUNK = 16_384
+CHUNK = 32_768
 """States worked out at a time: few enough that their terms stay in cache, many enough to spread what a chunk costs."""
 
 

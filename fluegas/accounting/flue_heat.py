@@ -26,12 +26,12 @@ class FlueHeat:
         vapour = gases_above(("H2O",), self.gas.fuel.reference_temperature)
         return vapour.mixture(np.ones(1)).enthalpy(self.at)
 
-    @property
+    @cached_property
     def fuel_water(self) -> FloatArray:
         """Heat of the water from the fuel, as vapour."""
-        return self.gas.water_from_fuel * self.of_vapour
+        return np.asarray(self.gas.water_from_fuel * self.of_vapour)
 
-    @property
+    @cached_property
     def air_moisture(self) -> FloatArray:
         """Heat of the water that came with the air, as vapour."""
-        return self.gas.water_from_air * self.of_vapour
+        return np.asarray(self.gas.water_from_air * self.of_vapour)

@@ -23,7 +23,7 @@ from fluegas.thermo.mixture import Temperature, gases_above
 from fluegas.thermo.polynomials import FloatArray
 from fluegas.thermo.species import species
 from fluegas.thermo.water import (
-    heat_of_evaporation,
+    heat_of_evaporation_at,
     liquid_enthalpy,
     saturation_pressure,
     saturation_temperature,
@@ -79,7 +79,7 @@ class Terms:
         if loss == "dry_gas":
             return self.flue.dry_gas
         if loss == "fuel_water":
-            return self.flue.fuel_water + (self.latent_heat if basis == GROSS else 0.0)
+            return self.flue.fuel_water + self.latent_heat if basis == GROSS else self.flue.fuel_water
         if loss == "air_moisture":
             return self.flue.air_moisture
         if loss == "condensation":
@@ -95,7 +95,7 @@ class Terms:
         Hydrogen that leaves bound to chlorine is counted with it, as gross less net heating value counts it.
         """
         water = self.gas.water_from_fuel + self.data.fuel.element("Cl") / 2
-        return np.asarray(water * heat_of_evaporation(self.reference))
+        return np.asarray(water * heat_of_evaporation_at(self.reference))
 
     def unburnt_gas(self, symbol: str, basis: str) -> FloatArray:
         """Heat of combustion of an unburnt flue gas [J/kg fuel]."""

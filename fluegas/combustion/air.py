@@ -39,8 +39,11 @@ def pressure_at_altitude(altitude: ArrayLike) -> FloatArray:
 def dry_air_amounts(dry_air: ArrayLike = 1.0, oxygen: ArrayLike = OXYGEN_IN_AIR) -> dict[str, FloatArray]:
     """Return the amounts of DRY_AIR_GASES in `dry_air` [mol] with an `oxygen` share; shapes broadcast."""
     total, x = np.asarray(dry_air, dtype=float), np.asarray(oxygen, dtype=float)
-    rest = total * ((1 - x) / (1 - OXYGEN_IN_AIR))
-    return {"O2": np.asarray(total * x), **{gas: np.asarray(share * rest) for gas, share in REST_OF_AIR.items()}}
+    rest = (1 - x) / (1 - OXYGEN_IN_AIR)
+    return {
+        "O2": np.asarray(total * x),
+        **{gas: np.asarray(total * (share * rest)) for gas, share in REST_OF_AIR.items()},
+    }
 
 
 def dry_air_molar_mass(oxygen: ArrayLike = OXYGEN_IN_AIR) -> FloatArray:

@@ -127,7 +127,7 @@ class ProductGas:
     @cached_property
     def dry_air(self) -> FloatArray:
         """Dry air supplied, a [mol/kg fuel]."""
-        return np.asarray(self.dry_flue_gas * self._dry_yield - self._dry_from_fuel + self.theoretical_oxygen)
+        return np.asarray(self.dry_flue_gas * self._dry_yield + (self.theoretical_oxygen - self._dry_from_fuel))
 
     @cached_property
     def theoretical_dry_air(self) -> FloatArray:
@@ -137,7 +137,7 @@ class ProductGas:
     @cached_property
     def excess_air(self) -> FloatArray:
         """Dry air supplied over the theoretical, less 1."""
-        return np.asarray(self.dry_air * self.air.oxygen / self.theoretical_oxygen - 1.0)
+        return np.asarray(self.dry_air * (self.air.oxygen / self.theoretical_oxygen) - 1.0)
 
     @cached_property
     def oxygen_left(self) -> FloatArray:
@@ -170,8 +170,10 @@ class ProductGas:
     def water_from_fuel(self) -> FloatArray:
         """Water formed, less what left unburnt, plus the fuel's moisture [mol/kg]."""
         r = self.readings
-        unburnt = (np.asarray(r.h2) + 2.0 * np.asarray(r.ch4)) * self.dry_flue_gas
-        return np.asarray(self.water_formed - unburnt + self.fuel.moisture)
+        burnt = self.water_formed + self.fuel.moisture
+        if not (np.any(r.h2) or np.any(r.ch4)):
+            return burnt
+        return np.asarray(burnt - (np.asarray(r.h2) + 2.0 * np.asarray(r.ch4)) * self.dry_flue_gas)
 
     @cached_property
     def water(self) -> FloatArray:
@@ -191,7 +193,7 @@ class ProductGas:
         measured = {"CO": r.co, "H2": r.h2, "CH4": r.ch4, "NO": r.no}
         unburnt = {gas: np.asarray(share * dry) for gas, share in measured.items() if np.any(share)}
         carbon_dioxide = self.burned_carbon + air["CO2"]
-        nitrogen = element("N") / 2 + air["N2"]
+        nitrogen = element("N") / 2 + air["N2"] if np.any(element("N")) else air["N2"]
         for gas in ("CO", "CH4"):
             if gas in unburnt:
                 carbon_dioxide = carbon_dioxide - unburnt[gas]
@@ -203,7 +205,7 @@ class ProductGas:
             **unburnt,
             **from_fuel,
             "N2": nitrogen,
-            "Ar": element("Ar") + air["Ar"],
+            "Ar": element("Ar") + air["Ar"] if np.any(element("Ar")) else air["Ar"],
             "O2": self.oxygen_left,
         }
 
@@ -222,6 +224,8 @@ class ProductGas:
 
 
 def _check_oxygen(share: FloatArray, oxygen: FloatArray | float, what: str) -> None:
+    if np.size(oxygen) == 1 and np.max(share, initial=0.0) < oxygen and np.min(share, initial=0.0) >= 0:
+        return
     if not np.any(share >= oxygen) and not np.any(share < 0):
         return
     bad = (share >= oxygen) | (share < 0)

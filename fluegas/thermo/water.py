@@ -5,7 +5,7 @@ curve. They meet at the triple point, 273.16 K. Heats are those of the species d
 the whole account, so that gross and net differ by exactly this heat of evaporation.
 """
 
-from functools import cache
+from functools import cache, lru_cache
 
 import numpy as np
 from numpy.typing import ArrayLike
@@ -76,15 +76,30 @@ def _check(what: str, value: FloatArray, low: float, high: float, unit: str) -> 
 
 
 def _over_liquid(t: FloatArray) -> FloatArray:
-    """Equation 30 of IAPWS R7-97."""
+    """Equation 30 of IAPWS R7-97; in place where it can be, since large logs of humid air meet it first."""
     n = _N
-    theta = t + n[8] / (t - n[9])
-    a = theta * theta + n[0] * theta + n[1]
-    b = (n[2] * theta + n[3]) * theta + n[4]
-    c = (n[5] * theta + n[6]) * theta + n[7]
-    root = 2 * c / (-b + np.sqrt(b * b - 4 * a * c))
-    root *= root
-    return root * root * 1e6
+    theta = n[8] / (t - n[9])
+    theta += t
+    a = theta + n[0]
+    a *= theta
+    a += n[1]
+    b = n[2] * theta
+    b += n[3]
+    b *= theta
+    b += n[4]
+    c = n[5] * theta
+    c += n[6]
+    c *= theta
+    c += n[7]
+    a *= c
+    a *= 4.0
+    root = np.sqrt(b * b - a)
+    root -= b
+    c /= root
+    c *= c
+    c *= c
+    c *= 16e6
+    return c
 
 
 def _liquid_temperature(p: FloatArray) -> FloatArray:
@@ -140,6 +155,12 @@ def liquid_enthalpy(temperature: ArrayLike) -> FloatArray:
         raise RangeError("temperature of liquid water", extreme, lowest, highest, unit="K", source=liquid.source)
     cold, hot = from_published(liquid.coefficients).T
     return np.where(t <= joint, enthalpy(cold, t, np.log(t)), enthalpy(hot, t, np.log(t)))
+
+
+@lru_cache(maxsize=64)
+def heat_of_evaporation_at(temperature: float) -> float:
+    """Return h_vapour - h_liquid [J/mol] at one temperature [K], kept for the next call."""
+    return float(heat_of_evaporation(temperature))
 
 
 def heat_of_evaporation(temperature: ArrayLike) -> FloatArray:

@@ -19,13 +19,15 @@ class Comparison:
         return f"{self.value:8.2f}  {verdict} {self.target:g}   {self.what}"
 
 
-def alternate(runs: Sequence[Callable[[], object]], repeats: int) -> list[float]:
-    """Return the median time [s] of each of `runs`, run in turn `repeats` times after one warm-up."""
+def alternate(
+    runs: Sequence[Callable[[], object]], repeats: int, clock: Callable[[], float] = time.perf_counter
+) -> list[float]:
+    """Return the median time [s] by `clock` of each of `runs`, run in turn `repeats` times after one warm-up."""
     times: list[list[float]] = [[] for _ in runs]
     for turn in range(repeats + 1):
         for run, found in zip(runs, times, strict=True):
-            start = time.perf_counter()
+            start = clock()
             run()
             if turn:
-                found.append(time.perf_counter() - start)
+                found.append(clock() - start)
     return [median(found) for found in times]
