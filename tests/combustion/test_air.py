@@ -163,7 +163,7 @@ def test_cold_air_beside_others_spoils_nothing() -> None:
 
 
 def test_frosty_air() -> None:
-    """At -10 degC saturation is over ice: 259.9 Pa (IAPWS R14-08), not the 286.5 Pa over supercooled water."""
+    """At -10 degC saturation is over ice: 259.9 Pa, not the 286.5 Pa over supercooled water (tables, from memory)."""
     ratio = float(air(263.15, relative_humidity=1.0).water_ratio)
     assert 101_325 * ratio / (1 + ratio) == pytest.approx(259.9, abs=0.1)
 
