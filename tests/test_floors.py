@@ -89,8 +89,10 @@ def test_every_room_has_a_floor() -> None:
 def test_a_file_imports_only_what_lies_below(file: Path) -> None:
     room = room_of(file)
     wrong = []
-    for line, module, _ in imports(file):
+    for line, module, at_import in imports(file):
         parts = module.split(".")
+        if room == "__init__" and not at_import:
+            continue  # the package's own file names what it loads late, for types only
         if parts[0] == "fluegas" and len(parts) > 1 and parts[1] != "__version__":
             other = parts[1]
             if other == room or other in SAME_FLOOR.get(room, set()):
