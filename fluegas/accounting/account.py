@@ -13,7 +13,8 @@ from types import EllipsisType, MappingProxyType
 
 import numpy as np
 
-from fluegas.accounting.figures import Figure, figures
+from fluegas.accounting.figure import Figure
+from fluegas.accounting.figures import figures
 from fluegas.accounting.inputs import AccountInput, state_shape, take
 from fluegas.accounting.terms import Terms
 from fluegas.errors import InputError

@@ -1,4 +1,4 @@
-"""What stands beside the account: stack loss from air temperature, available heat, flame, dew points, carbon dioxide.
+"""What stands beside the account: stack loss from air temperature, available heat, flame, dew points.
 
 Every function takes the Terms of one chunk and gives an array that broadcasts to its state shape.
 """
@@ -12,7 +12,6 @@ from fluegas.combustion.dew_point import acid_dew_point, water_dew_point
 from fluegas.combustion.flame import complete_flame_temperature
 from fluegas.thermo.mixture import Temperature
 from fluegas.thermo.polynomials import FloatArray
-from fluegas.thermo.species import species
 
 
 def stack_loss_from_air(terms: Terms) -> FloatArray:
@@ -74,9 +73,3 @@ def dew_point_of_acid(terms: Terms) -> FloatArray:
     trioxide = terms.gas.amount("SO2") * terms.data.sulfur_trioxide_share
     partial = trioxide / terms.gas.wet_flue_gas * terms.data.air.pressure
     return acid_dew_point(_water_pressure(terms), partial, terms.data.acid_correlation)
-
-
-def fossil_carbon_dioxide(terms: Terms) -> FloatArray:
-    """Return the fossil CO2 from the carbon that burns [kg/kg fuel]; unburnt gases counted as burnt."""
-    fossil = terms.gas.burned_carbon * (1.0 - np.asarray(terms.data.biogenic_share))
-    return np.asarray(fossil * species("CO2").molar_mass)

@@ -9,6 +9,8 @@ from dataclasses import dataclass
 
 import numpy as np
 
+from fluegas.accounting.air_density import air_density_cautions
+from fluegas.accounting.emissions import emission_cautions
 from fluegas.accounting.inputs import AccountInput
 from fluegas.combustion.dew_point import ACID_DOUBT
 from fluegas.errors import Caution
@@ -38,8 +40,10 @@ def cautions_of(data: AccountInput, figures: Mapping[str, float], limits: Limits
         *_fuel_rich(data, figures),
         *_no_account(figures),
         *_carbon_monoxide(data, figures, limits),
+        *air_density_cautions(data, figures),
         *_water(data, figures),
         *_acid(data, figures, limits),
+        *emission_cautions(data, figures),
         *_validity(data, figures),
     )
 

@@ -5,40 +5,19 @@ itself take what they need from here.
 """
 
 from collections.abc import Callable, Mapping
-from dataclasses import dataclass
 from functools import cache
 from types import MappingProxyType
 
 from fluegas.accounting import beside
+from fluegas.accounting.air_density import air_density_figures
+from fluegas.accounting.emission_figures import emission_figures
+from fluegas.accounting.figure import BESIDE, HEAT_ACCOUNT, LIMITS, MIXTURE, Figure
 from fluegas.accounting.inputs import BASES
 from fluegas.accounting.terms import Terms
 from fluegas.combustion.air import dry_air_molar_mass
 from fluegas.combustion.product_gas import DRY_FLUE_GASES, FLUE_GASES
 from fluegas.thermo.polynomials import FloatArray
 from fluegas.thermo.species import atomic_weight, species
-
-MIXTURE, HEAT_ACCOUNT, BESIDE, LIMITS, EMISSIONS = (
-    "mixture",
-    "heat account",
-    "beside the account",
-    "limits",
-    "emissions",
-)
-
-
-@dataclass(frozen=True)
-class Figure:
-    """One figure: `dimension` is a name of the units floor, `when_rich` true where it stands though fuel-rich."""
-
-    name: str
-    label: str
-    dimension: str
-    group: str
-    help: str
-    source: str
-    formula: Callable[[Terms], FloatArray]
-    when_rich: bool = False
-
 
 LOSS_LABELS: Mapping[str, tuple[str, str]] = MappingProxyType(
     {
@@ -72,7 +51,8 @@ _BALANCE = "element balances, exact"
 @cache
 def figures() -> Mapping[str, Figure]:
     """Return every figure by name, in the order of tables."""
-    every = (*_mixture(), *_losses(), *_credits(), *_efficiency(), *_beside(), *_emissions())
+    account = (*_mixture(), *_losses(), *_credits(), *_efficiency(), *_beside())
+    every = (*account, *air_density_figures(), *emission_figures())
     return MappingProxyType({figure.name: figure for figure in every})
 
 
@@ -223,23 +203,4 @@ def _beside() -> list[Figure]:
     source = "Verhoff and Banchero (1974) unless another is named"
     name, label = "dew_point.acid", "Acid dew point +-5 K"
     found.append(Figure(name, label, "temperature", LIMITS, text, source, beside.dew_point_of_acid))
-    return found
-
-
-def _emissions() -> list[Figure]:
-    def per_input(basis: str) -> Callable[[Terms], FloatArray]:
-        return lambda terms: beside.fossil_carbon_dioxide(terms) / terms.heating_value(basis)
-
-    def per_useful(terms: Terms) -> FloatArray:
-        return beside.fossil_carbon_dioxide(terms) / terms.useful_heat
-
-    found = []
-    for basis in BASES:
-        name, text = f"emissions.co2_per_input.{basis}", f"Fossil CO2 per {basis} heat input."
-        found.append(
-            Figure(name, "CO2 per input", "emission_per_energy", EMISSIONS, text, _BALANCE, per_input(basis), True)
-        )
-    text = "Fossil CO2 per useful heat."
-    name = "emissions.co2_per_useful"
-    found.append(Figure(name, "CO2 per useful heat", "emission_per_energy", EMISSIONS, text, _BALANCE, per_useful))
     return found

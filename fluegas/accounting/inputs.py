@@ -12,12 +12,27 @@ from fluegas.combustion.dew_point import DEFAULT_CORRELATION
 from fluegas.combustion.flame import Recirculation
 from fluegas.combustion.fuel import Fuel
 from fluegas.combustion.product_gas import FlueReadings
-from fluegas.thermo.polynomials import FloatArray
+from fluegas.thermo.polynomials import BoolArray, FloatArray
 
 GROSS, NET = "gross", "net"
 BASES = (GROSS, NET)
 
 Part = TypeVar("Part")
+
+
+@dataclass(frozen=True)
+class EmissionReadings:
+    """Readings that only emissions are worked out from, mole fractions in the dry flue gas; NaN where not read.
+
+    no2, nox (NO and NO2 together), so2. co_read, no_read: true where CO and NO, which stand in FlueReadings because the
+    balances need them, were read, so that a zero there is a reading; a share above zero counts as read.
+    """
+
+    no2: FloatArray | float = np.nan
+    nox: FloatArray | float = np.nan
+    so2: FloatArray | float = np.nan
+    co_read: BoolArray | bool = False
+    no_read: BoolArray | bool = False
 
 
 @dataclass(frozen=True)
@@ -34,6 +49,8 @@ class AccountInput:
     short_formula_a, short_formula_b: constants of the short flue-loss formula [percent, percent/K]; NaN where it has
     none for the fuel. recirculation: flue gas led back to the flame, None without.
     biogenic_share: share of the fuel's carbon that is not fossil.
+    emissions: readings for the emissions alone. reference_oxygen: O2 in the dry gas that their limits refer to.
+    coldest_air, hottest_air: K of the site's extreme days, NaN where not given.
     """
 
     fuel: Fuel
@@ -51,6 +68,10 @@ class AccountInput:
     short_formula_b: FloatArray | float = np.nan
     recirculation: Recirculation | None = None
     biogenic_share: FloatArray | float = 0.0
+    emissions: EmissionReadings = field(default_factory=EmissionReadings)
+    reference_oxygen: FloatArray | float = 0.03
+    coldest_air: FloatArray | float = np.nan
+    hottest_air: FloatArray | float = np.nan
 
 
 def state_shape(part: object) -> tuple[int, ...]:

@@ -43,11 +43,15 @@ class UnitInput:
 
 @dataclass(frozen=True)
 class Ledger:
-    """Accounts of the settings, their comparison, and the heat input of each [W, file's basis], NaN where not known."""
+    """Accounts of the settings and their comparison; NaN where not known.
+
+    heat_input, annual_heat: of each setting on the file's basis [W, J/a], the latter if it ran so all year.
+    """
 
     account: HeatAccount
     comparison: Comparison
     heat_input: FloatArray
+    annual_heat: FloatArray
 
 
 def ledger(data: AccountInput, unit: UnitInput, outputs: Sequence[str] | None = None) -> Ledger:
@@ -70,7 +74,7 @@ def ledger(data: AccountInput, unit: UnitInput, outputs: Sequence[str] | None = 
         carbon_dioxide=account[f"emissions.co2_per_input.{basis}"],
     )
     comparison = compare(efficiency, account["efficiency.gross"], account["efficiency.net"], unit.compared_with, annual)
-    return Ledger(account, comparison, heat_input)
+    return Ledger(account, comparison, heat_input, annual.heat)
 
 
 def with_surface(data: AccountInput, unit: UnitInput) -> AccountInput:

@@ -22,13 +22,7 @@ from fluegas.errors import RangeError
 from fluegas.thermo.mixture import Temperature, gases_above
 from fluegas.thermo.polynomials import FloatArray
 from fluegas.thermo.species import species
-from fluegas.thermo.water import (
-    heat_of_evaporation_at,
-    liquid_enthalpy,
-    saturation_pressure,
-    saturation_temperature,
-    vapour_enthalpy,
-)
+from fluegas.thermo.water import heat_of_evaporation_at
 
 HEAT_OF_UNBURNED_CARBON = 33.7e6
 """Heat of combustion of carbon in ash [J/kg]; the value that the standards for boilers use (from memory: EN 12952-15
@@ -115,31 +109,17 @@ class Terms:
         """Water that leaves as condensate [mol/kg fuel]: measured, else so that the gas leaves saturated."""
         measured = self.data.condensate
         if measured is None:
-            return self._saturation_rule
+            return self.flue.saturation_condensate
         amount = measured / species("H2O").molar_mass
         if np.any(amount > self.gas.water):
             worst = float(np.max(amount / self.gas.water))
             raise RangeError("measured condensate over all water of the flue gas", worst, low=0.0, high=1.0)
-        return np.where(np.isnan(measured), self._saturation_rule, amount)
-
-    @cached_property
-    def _saturation_rule(self) -> FloatArray:
-        temperature, pressure = self.flue.at.kelvin, self.data.air.pressure
-        if self.flue.at.lowest >= float(saturation_temperature(np.max(pressure))):
-            return np.zeros(())
-        saturated = saturation_pressure(np.minimum(temperature, saturation_temperature(0.99 * pressure)))
-        vapour = self.gas.dry_flue_gas * saturated / (pressure - saturated)
-        return np.maximum(self.gas.water - vapour, 0.0)
+        return np.where(np.isnan(measured), self.flue.saturation_condensate, amount)
 
     @cached_property
     def condensation(self) -> FloatArray:
         """Heat given back by condensing, negative [J/kg fuel]; the condensate leaves at the flue temperature."""
-        condensed = self.condensed_water
-        if not np.any(condensed):
-            return np.zeros(())
-        temperature = np.where(condensed > 0, self.flue.at.kelvin, self.reference)
-        heat = vapour_enthalpy(temperature) - liquid_enthalpy(temperature)
-        return np.asarray(-condensed * heat)
+        return self.flue.condensation(self.condensed_water)
 
     @cached_property
     def credits(self) -> dict[str, FloatArray]:

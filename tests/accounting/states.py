@@ -98,7 +98,7 @@ def state(fuel: Fuel, **given: object) -> AccountInput:
     return AccountInput(fuel=fuel, air=Air(**air), readings=FlueReadings(**readings), **own)
 
 
-_PLAIN = ("basis", "other", "recirculation", "acid_correlation", "sulfur_trioxide_share", "biogenic_share")
+_PLAIN = ("basis", "other", "recirculation", "acid_correlation", "sulfur_trioxide_share", "biogenic_share", "emissions")
 
 
 def _floats(low: float, high: float) -> st.SearchStrategy[float]:

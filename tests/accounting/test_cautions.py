@@ -12,7 +12,7 @@ from hypothesis import given, settings
 import fluegas
 from fluegas.accounting.account import heat_account
 from fluegas.accounting.cautions import Limits, cautions_of
-from fluegas.accounting.inputs import AccountInput
+from fluegas.accounting.inputs import AccountInput, EmissionReadings
 from fluegas.accounting.surface import estimated_surface_heat
 from fluegas.combustion.gas_fuel import gas_fuel
 from fluegas.combustion.solid_fuel import solid_fuel
@@ -82,6 +82,34 @@ CASES = {
         undiluted_gas(310.0), undiluted_gas(290.0), 310e-6, 300e-6, words=("licensed persons",)
     ),
     "carbon_monoxide_stop": Case(undiluted_gas(1100.0), undiluted_gas(900.0), 1100e-6, 1000e-6, words=("CO kills",)),
+    "air_density_rich": Case(
+        state(pipeline_gas(), excess_air=0.02, air_temperature=293.15, hottest_air=311.15),
+        state(pipeline_gas(), excess_air=0.15, air_temperature=293.15, hottest_air=311.15),
+        1.02 * 293.15 / 311.15,
+        1.0,
+        words=("hottest day", "dampers as they are", "fuel-rich", "Licensed persons only", "local codes"),
+    ),
+    "air_density_oxygen": Case(
+        state(pipeline_gas(), excess_air=0.03, coldest_air=300.15),
+        state(pipeline_gas(), excess_air=0.03, coldest_air=283.15),
+        None,
+        0.01,
+        words=("coldest day", "1 %", "licensed person"),
+    ),
+    "nox_disagrees": Case(
+        state(pipeline_gas(), no=90e-6, emissions=EmissionReadings(no2=5e-6, nox=60e-6)),
+        state(pipeline_gas(), no=90e-6, emissions=EmissionReadings(no2=5e-6, nox=97e-6)),
+        95e-6,
+        60e-6,
+        words=("95 ppm", "60 ppm"),
+    ),
+    "sulfur_dioxide_above_fuel": Case(
+        state(pipeline_gas(), emissions=EmissionReadings(so2=25e-6)),
+        state(pipeline_gas(), emissions=EmissionReadings(so2=3e-6)),
+        25e-6,
+        0.0,
+        words=("25 ppm", "cannot be right"),
+    ),
     "below_water_dew_point": Case(
         state(pipeline_gas(), flue_temperature=CELSIUS + 45),
         state(pipeline_gas(), flue_temperature=CELSIUS + 65),
