@@ -1,5 +1,6 @@
 """Entry of the program: hands the words of the command line to a command and its outcome to the shell."""
 
+import io
 import os
 import sys
 from collections.abc import Sequence
@@ -16,6 +17,7 @@ def main(words: Sequence[str] | None = None) -> int:
 
     from fluegas.cli import COMMANDS, group
     from fluegas.errors import FluegasError, InputError
+    from fluegas.scenario.wording import escaped
 
     given = list(sys.argv[1:] if words is None else words)
     for stream in (sys.stdout, sys.stderr):
@@ -23,6 +25,7 @@ def main(words: Sequence[str] | None = None) -> int:
             stream.reconfigure(errors="backslashreplace")
     if given and not given[0].startswith("-") and given[0] not in COMMANDS:
         return _workspace(given[0], list(COMMANDS))
+    output = sys.stdout
     try:
         group.main(args=given, prog_name="fluegas", standalone_mode=False)
         sys.stdout.flush()
@@ -30,10 +33,16 @@ def main(words: Sequence[str] | None = None) -> int:
         click.echo(error.format_message(), err=True)
         return BAD_INPUT
     except click.ClickException as error:
-        error.show()
+        said = io.StringIO()
+        error.show(said)
+        click.echo("\n".join(map(escaped, said.getvalue().splitlines())), err=True)
         return BAD_INPUT
     except (KeyboardInterrupt, click.Abort):
         return INTERRUPTED
+    except SystemExit:
+        if sys.stdout is not output:  # click has put its own stream in place of a closed pipe
+            return BROKEN_PIPE
+        raise
     except BrokenPipeError:
         os.dup2(os.open(os.devnull, os.O_WRONLY), sys.stdout.fileno())
         return BROKEN_PIPE
@@ -44,7 +53,8 @@ def main(words: Sequence[str] | None = None) -> int:
         click.echo(f"fluegas: {error}", err=True)
         return FAILED
     except Exception as error:
-        click.echo(f"fluegas: unexpected failure, please report it: {type(error).__name__}: {error}", err=True)
+        said_why = f"{type(error).__name__}: {escaped(str(error))}"
+        click.echo(f"fluegas: unexpected failure, please report it: {said_why}", err=True)
         return FAILED
     return DONE
 

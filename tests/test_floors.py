@@ -31,14 +31,14 @@ PACKAGES = {
     "combustion": {"numpy"},
     "accounting": {"numpy"},
     "scenario": {"numpy", "tomlkit"},
-    "report": {"numpy", "rich"},
+    "report": {"numpy", "rich", "matplotlib"},
     "cli": {"click", "rich"},
     "__main__": {"click"},
     "__init__": set[str](),
 }
 """Third-party packages that the files of a floor may import."""
 
-LATE = {"pint": "units", "tomlkit": "scenario"}
+LATE = {"pint": "units", "tomlkit": "scenario", "matplotlib": "report"}
 """Heavy packages that may be imported only inside a function (or for types)."""
 
 LEVEL = {room: level for level, rooms in enumerate(FLOORS) for room in rooms}

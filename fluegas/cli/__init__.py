@@ -8,6 +8,11 @@ from fluegas import __version__
 
 COMMANDS = {
     "account": "The heat account of every setting side by side.",
+    "duty": "The heat that the flue gas gives between two temperatures.",
+    "curve": "Figures against excess air, O2, a temperature or the fuel's moisture.",
+    "fuel": "What a fuel is: heating values, air, flue gas, density, factors of emission rules.",
+    "fuels": "The fuel library.",
+    "new": "A commented scenario file to start from.",
     "check": "Problems of a scenario file and cautions about its readings.",
 }
 """Every command and its line in the help; the module `fluegas.cli.NAME` holds its function `command`."""

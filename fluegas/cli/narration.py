@@ -1,5 +1,6 @@
 """Where the commands print: data through one console, narration to standard error."""
 
+import os
 import sys
 from typing import TYPE_CHECKING
 
@@ -13,10 +14,16 @@ if TYPE_CHECKING:
 
 
 def console() -> "Console":
-    """Return the console for data: standard output, no markup, no guessing of highlights."""
+    """Return the console for data: standard output, no markup, no highlights, plain if NO_COLOR is set."""
     from rich.console import Console
 
-    return Console(file=sys.stdout, markup=False, highlight=False, emoji=False, soft_wrap=False)
+    return Console(
+        file=sys.stdout,
+        color_system=None if os.environ.get("NO_COLOR") else "auto",
+        markup=False,
+        highlight=False,
+        emoji=False,
+    )
 
 
 def note_unused_keys(scenario: Scenario) -> None:

@@ -4,6 +4,7 @@ import csv
 import io
 
 from fluegas.report.ledger_table import LedgerTable
+from fluegas.report.numbers import MISSING
 
 _FORMULA_STARTS = ("=", "+", "-", "@", "\t", "\r")
 
@@ -18,11 +19,15 @@ def csv_text(table: LedgerTable) -> str:
             head = [safe_cell(cell) for cell in (row.name, row.label, row.unit)]
             is_text = row.unit == ""
             cells = [
-                safe_cell(text) if is_text else "" if number is None else repr(number)
+                _text_cell(text) if is_text else "" if number is None else repr(number)
                 for number, text in zip(row.numbers, row.texts, strict=True)
             ]
             writer.writerow([*head, *cells])
     return out.getvalue()
+
+
+def _text_cell(text: str) -> str:
+    return "" if text == MISSING else safe_cell(text)
 
 
 def safe_cell(text: str) -> str:

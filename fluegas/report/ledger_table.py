@@ -8,6 +8,8 @@ from dataclasses import dataclass
 
 import numpy as np
 
+from fluegas.accounting.emission_figures import LABELS
+from fluegas.accounting.emissions import COUNTED_AS, ORIGINS, origins, per_year
 from fluegas.accounting.figures import CREDIT_LABELS, LOSS_LABELS, figures
 from fluegas.accounting.inputs import BASES
 from fluegas.accounting.ledger import other_losses
@@ -58,7 +60,8 @@ def ledger_table(result: Result, *, system: str, basis: str) -> LedgerTable:
         Group("mixture", tuple(_mixture(result, system))),
         Group(f"heat account, {basis}", tuple(_heat_account(result, basis))),
         Group("beside the account", tuple(_beside(result, system, basis))),
-        Group("limits", tuple(_figures(result, ("dew_point.water", "dew_point.acid"), system))),
+        Group("limits", tuple(_limits(result, system))),
+        Group(f"emissions, {basis} input", tuple(_emissions(result, system, basis))),
         *_against(result, system),
     )
     names = tuple(column.name for column in result.case.columns)
@@ -69,7 +72,7 @@ def _entered(result: Result) -> Iterable[Row]:
     """Yield what was entered for the settings, in the words and units of the file."""
     settings = result.scenario.settings
     for key, field in FIELDS_OF["setting"].items():
-        if field.kind == "quantity":
+        if field.kind == "quantity" or key == "o2_basis":
             yield from _text_row(f"entered.{key}", field.label, [_reading(setting, key) for setting in settings])
     columns = result.case.columns
     for name, wholes in (
@@ -77,9 +80,9 @@ def _entered(result: Result) -> Iterable[Row]:
         ("fuel", [column.entry for column in columns]),
     ):
         overrides = [setting.table(name) or Table() for setting in settings]
-        for key in dict.fromkeys(key for override in overrides for key in override.entries):
+        for key in dict.fromkeys(key for override in overrides for key in _named(override)):
             field = FIELDS_OF[name][key]
-            if field.kind != "table":
+            if field.kind not in ("table", "rows"):
                 yield from _text_row(
                     f"entered.{name}.{key}", field.label, [_as_written(whole, key) for whole in wholes]
                 )
@@ -92,6 +95,12 @@ def _entered(result: Result) -> Iterable[Row]:
                 yield from _text_row(f"entered.{name}.{analysis}.{key}", key.capitalize(), texts)
 
 
+def _named(override: Table) -> Iterable[str]:
+    """Yield the keys of an override; a library fuel and a blend are shown by the fuel's name."""
+    for key in override.entries:
+        yield "name" if key in ("library", "part") else key
+
+
 def _text_row(name: str, label: str, texts: Sequence[str]) -> Iterable[Row]:
     if any(text != MISSING for text in texts):
         yield Row(name, label, "", (None,) * len(texts), tuple(texts))
@@ -99,7 +108,7 @@ def _text_row(name: str, label: str, texts: Sequence[str]) -> Iterable[Row]:
 
 def _as_written(table: Table, key: str) -> str:
     value = table.entries.get(key)
-    return value.text if isinstance(value, Measure | Price) else MISSING if value is None else str(value)
+    return value.text.strip() if isinstance(value, Measure | Price) else MISSING if value is None else str(value)
 
 
 def _percent_text(value: float | None) -> str:
@@ -112,11 +121,14 @@ def _reading(setting: Table, key: str) -> str:
     if not repeats:
         return _as_written(setting, key)
     first = repeats[0]
+    if any(measure.dimension != first.dimension for measure in repeats):
+        return f"{len(repeats)} readings"
     mean = sum(measure.value for measure in repeats) / len(repeats)
     return f"{from_si(mean, first.dimension, first.unit):.4g} {first.unit} ({len(repeats)})"
 
 
-def _row(name: str, label: str, dimension: str, values: FloatArray, system: str, *, signed: bool = False) -> Row:
+def figure_row(name: str, label: str, dimension: str, values: FloatArray, system: str, *, signed: bool = False) -> Row:
+    """Return one line of SI `values` of a `dimension` in units of the `system`; `signed` puts a plus before gains."""
     unit = unit_of(dimension, system)
     numbers = tuple(in_unit(float(value), dimension, unit) for value in values)
     texts = tuple(shown(float(value), dimension, unit, signed=signed) for value in values)
@@ -129,7 +141,7 @@ def _figures(result: Result, names: Iterable[str], system: str) -> Iterable[Row]
         if np.all(np.isnan(values)):
             continue
         figure = figures()[name]
-        yield _row(name, figure.label, figure.dimension, values, system)
+        yield figure_row(name, figure.label, figure.dimension, values, system)
 
 
 def _mixture(result: Result, system: str) -> Iterable[Row]:
@@ -138,12 +150,12 @@ def _mixture(result: Result, system: str) -> Iterable[Row]:
         name = f"flue_gas.dry.{gas}"
         values = result.ledger.account[name]
         if np.any(values > 0):
-            yield _row(name, f"{gas}, dry", "trace_fraction", values, system)
+            yield figure_row(name, f"{gas}, dry", "trace_fraction", values, system)
     yield from _figures(result, ("flue_gas.wet.H2O",), system)
 
 
 def _percent(name: str, label: str, values: FloatArray, *, signed: bool = False, is_sum: bool = False) -> Row:
-    row = _row(name, label, "fraction", values, "si", signed=signed)
+    row = figure_row(name, label, "fraction", values, "si", signed=signed)
     return Row(row.name, row.label, row.unit, row.numbers, row.texts, is_sum)
 
 
@@ -173,9 +185,49 @@ def _beside(result: Result, system: str, basis: str) -> Iterable[Row]:
         "stack_loss_from_air.short_formula",
         f"available_heat.{basis}",
         "flame_temperature.complete",
-        "emissions.co2_per_useful",
     )
     yield from _figures(result, names, system)
+
+
+def _limits(result: Result, system: str) -> Iterable[Row]:
+    days = ("o2_coldest", "o2_hottest", "excess_air_coldest", "excess_air_hottest")
+    names = ("dew_point.water", "dew_point.acid", *(f"air_density.{day}" for day in days))
+    yield from _figures(result, names, system)
+
+
+def _emissions(result: Result, system: str, basis: str) -> Iterable[Row]:
+    """Yield carbon dioxide and each gas that was read or that the fuel's sulfur makes; NOx stands for NO and NO2."""
+    case, account = result.case, result.ledger.account
+    year = per_year(account, result.ledger.annual_heat, case.data.basis)
+    stems = ("co2", "all_co2") if np.any(case.data.biogenic_share) else ("co2",)
+    for stem in stems:
+        yield from _figures(result, (f"emissions.{stem}_per_useful", f"emissions.{stem}_per_input.{basis}"), system)
+        yield from _a_year(stem, "CO2" if stem == "co2" else "All CO2", "mass", year[stem], system)
+    found = [gas for gas in COUNTED_AS if _matters(account[f"emissions.{gas}.dry"])]
+    if "nox" in found:
+        found = [gas for gas in found if gas not in ("no", "no2")]
+    if found:
+        yield from _figures(result, ("emissions.reference_oxygen",), system)
+    forms = ("concentration", "at_reference_oxygen") if system == "si" else ("dry", "dry_at_reference_oxygen")
+    for gas in found:
+        if gas in ORIGINS:
+            labels = [text or MISSING for text in origins(case.data)[gas].tolist()]
+            yield from _text_row(f"emissions.{gas}.origin", f"{LABELS[gas]} by", labels)
+        yield from _figures(result, [f"emissions.{gas}.{form}" for form in forms], system)
+        if gas == "co":
+            yield from _figures(result, ("emissions.co.air_free",), system)
+        yield from _figures(result, (f"emissions.{gas}.per_input.{basis}",), system)
+        yield from _a_year(gas, LABELS[gas], "trace_mass", year[gas], system)
+
+
+def _matters(values: FloatArray) -> bool:
+    """Return whether a gas is there in any setting."""
+    return bool(np.any(np.nan_to_num(values) > 0))
+
+
+def _a_year(stem: str, label: str, dimension: str, values: FloatArray, system: str) -> Iterable[Row]:
+    if not np.all(np.isnan(values)):
+        yield figure_row(f"emissions.{stem}.per_year", f"{label} a year", dimension, values, system)
 
 
 def _against(result: Result, system: str) -> Iterable[Group]:
@@ -195,14 +247,14 @@ def _against(result: Result, system: str) -> Iterable[Group]:
         rows.append(_percent("against_baseline.fuel_gross", "Fuel, gross", comparison.fuel_gross, signed=True))
         rows.append(_percent("against_baseline.fuel_net", "Fuel, net", comparison.fuel_net, signed=True))
     if not _unknown(comparison.heat, others):
-        rows.append(_row("against_baseline.heat", "Heat a year", "energy", comparison.heat, system, signed=True))
+        rows.append(figure_row("against_baseline.heat", "Heat a year", "energy", comparison.heat, system, signed=True))
     if not _unknown(comparison.cost, others):
         texts = tuple(MISSING if np.isnan(cost) else f"{cost:+,.0f}".replace(",", " ") for cost in comparison.cost)
         numbers = tuple(None if np.isnan(cost) else float(cost) for cost in comparison.cost)
         rows.append(Row("against_baseline.cost", "Cost a year", result.case.currency or "", numbers, texts))
     if not _unknown(comparison.carbon_dioxide, others):
         carbon = comparison.carbon_dioxide
-        rows.append(_row("against_baseline.co2", "Fossil CO2 a year", "mass", carbon, system, signed=True))
+        rows.append(figure_row("against_baseline.co2", "Fossil CO2 a year", "mass", carbon, system, signed=True))
     yield Group("against baseline" if plain else "against", tuple(rows))
 
 

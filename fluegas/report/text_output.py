@@ -26,6 +26,15 @@ def print_result(console: Console, result: Result, table: LedgerTable, *, system
     print_trimmed(console, _parts(result, table, console.width, system, basis))
 
 
+def print_table(console: Console, result: Result, table: LedgerTable, heading: str) -> None:
+    """Print a table of settings: title, `heading`, blocks that fit the width, cautions, the safety line."""
+    title = Text(printable(result.scenario.top.text("title") or result.scenario.name), style="bold")
+    parts: list[RenderableType] = [title, Text(heading)]
+    for places in blocks(table, console.width):
+        parts += [Text(), _block(table, places)]
+    print_trimmed(console, [*parts, *_cautions(result), Text(), Text(SAFETY, style="italic")])
+
+
 def print_trimmed(console: Console, parts: Iterable[RenderableType]) -> None:
     """Print `parts` without the blanks that tables leave at the ends of lines."""
     with console.capture() as capture:
@@ -63,7 +72,7 @@ def _heading(result: Result, system: str, basis: str) -> Iterable[RenderableType
 
 def blocks(table: LedgerTable, width: int) -> list[list[int]]:
     """Return places of settings in blocks that fit `width`; the baseline leads every block."""
-    room = max(1, (width - LABEL_WIDTH - UNIT_WIDTH - 2) // (CELL_WIDTH + 1))
+    room = max(1, (width - LABEL_WIDTH - UNIT_WIDTH - 2) // (cell_width(table) + 1))
     places = list(range(len(table.settings)))
     if len(places) <= room:
         return [places]
@@ -72,14 +81,21 @@ def blocks(table: LedgerTable, width: int) -> list[list[int]]:
     return [[table.baseline, *others[start : start + each]] for start in range(0, len(others), each)]
 
 
+def cell_width(table: LedgerTable) -> int:
+    """Return the width of a setting's column: wider than usual where a number would be broken across lines."""
+    numbers = (text for group in table.groups for row in group.rows if row.unit for text in row.texts)
+    return max(CELL_WIDTH, *map(len, numbers))
+
+
 def _block(table: LedgerTable, places: Sequence[int]) -> Table:
     shown_table = Table(box=None, padding=(0, 1, 0, 0), pad_edge=False, show_header=True, header_style="bold")
     shown_table.add_column("", width=LABEL_WIDTH, no_wrap=True, overflow="ellipsis")
     shown_table.add_column("", width=UNIT_WIDTH, no_wrap=True)
+    width = cell_width(table)
     for place in places:
         mark = "*" if place == table.baseline else ""
         heading = Text(printable(table.settings[place], 60) + mark)
-        shown_table.add_column(heading, width=CELL_WIDTH, justify="right", overflow="fold")
+        shown_table.add_column(heading, width=width, justify="right", overflow="fold")
     for group in table.groups:
         shown_table.add_row(Text(group.title, style="underline"))
         for row in group.rows:
