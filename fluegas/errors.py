@@ -6,6 +6,7 @@ FluegasError
 │   ├── RangeError                   a value outside its limits
 │   ├── AnalysisError                a fuel analysis that cannot be
 │   └── ScenarioError                one or more problems in a scenario file
+├── SavingError (OSError)            a scenario file cannot be changed or written; nothing was lost
 ├── ConvergenceError (ArithmeticError)   an iteration did not settle
 └── DataError (RuntimeError)         the program's own data are missing or damaged
 
@@ -87,6 +88,10 @@ class ScenarioError(InputError):
     def __init__(self, problems: tuple[Problem, ...]) -> None:
         self.problems = problems
         super().__init__("\n".join(str(problem) for problem in problems))
+
+
+class SavingError(FluegasError, OSError):
+    """A scenario file cannot be changed or written as asked. The file and the unsaved text are as they were."""
 
 
 class ConvergenceError(FluegasError, ArithmeticError):

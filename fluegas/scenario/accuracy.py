@@ -66,8 +66,10 @@ def _share(given: object) -> str | None:
 
 def _entry(path: Path, name: str, given: object) -> Iterator[tuple[Path, str]]:
     if not isinstance(given, Mapping):
-        yield path, 'must be a table such as { shared = "0.2 vol%", random = "0.1 vol%" }'
+        yield path, f'must be a table such as {{ shared = "{_example(name)}" }}'
         return
+    if set(given) <= {"kind"}:
+        yield path, f'says neither shared nor random; write e.g. {{ shared = "{_example(name)}" }}'
     for part, value in given.items():
         where = (*path, str(part))
         if part not in _PARTS:
@@ -92,10 +94,19 @@ def _dimensions(name: str) -> tuple[str, ...]:
     return ("fraction",) if field is None else tuple(each for each in field.dimensions if each != "mass_concentration")
 
 
+def _example(name: str) -> str:
+    kinds = _dimensions(name)
+    if name in _RELATIVE:
+        return "2 %"
+    if kinds == ("fraction",):
+        return "0.2 vol%" if name in FIELDS_OF["setting"] else "2 points"
+    return {"pressure": "3 mbar", "temperature_difference": "2 K"}.get(kinds[0], "2 %")
+
+
 def _amount(name: str, given: object) -> str | None:
     """Return what is wrong with one amount of doubt, None if it can be used."""
     if isinstance(given, bool) or not isinstance(given, str):
-        return f"{quoted(given)} has no unit; write it as text with one"
+        return f'{quoted(given)} has no unit; write it as text with one, e.g. "{_example(name)}"'
     try:
         for pattern in (_OF_READING, _POINTS):
             matched = pattern.fullmatch(given.strip())
@@ -104,7 +115,11 @@ def _amount(name: str, given: object) -> str | None:
         dimensions = _dimensions(name)
         measure = parse(given, *(("fraction",) if name in _RELATIVE else ()), *dimensions)
     except QuantityError as error:
-        return str(error)
+        if name in _RELATIVE or _dimensions(name) != ("fraction",):
+            return str(error)
+        # The suggestion for a share is a bare percent, which is refused here.
+        wrong = str(error).partition("; write e.g.")[0].partition(", e.g. ")[0]
+        return f'{wrong}; write e.g. "{_example(name)}"'
     if measure.unit == "%" and name not in _RELATIVE:
         return (
             f'{quoted(given)} may be of the reading or of the gas; write "... vol%", "... points" or "... % of reading"'

@@ -76,7 +76,7 @@ def air_of(base: Table, override: Table | None, reference_temperature: float) ->
         burner_temperature=given("burner_temperature"),
         preheated_outside=entry.text("preheat_from") == "outside",
     )
-    float(stack_air([state]).water_ratio[0])
+    float(np.max(stack_air([state]).water_ratio))
     return state, cautions
 
 

@@ -6,6 +6,7 @@ from dataclasses import dataclass, replace
 import numpy as np
 
 from fluegas.accounting.cautions import LIMITS_SOURCE, Limits
+from fluegas.accounting.emissions import REFERENCE_OXYGEN
 from fluegas.accounting.inputs import GROSS, AccountInput
 from fluegas.accounting.ledger import UnitInput
 from fluegas.accounting.short_formula import short_formula_constants
@@ -13,16 +14,20 @@ from fluegas.accounting.surface import estimated_surface_heat
 from fluegas.combustion.fuel import Fuel, stack_fuels
 from fluegas.errors import Caution, InputError, Problem, ScenarioError
 from fluegas.scenario.air_entry import AirState, air_of, merged_air, stack_air
-from fluegas.scenario.fuel_entry import (
-    SULFUR_TRIOXIDE_SHARE,
-    amount_per_mass_of,
-    ash_carbon_of,
-    fuel_of,
-    merged_fuel,
-    state_of,
-)
+from fluegas.scenario.fuel_entry import amount_per_mass_of, ash_carbon_of, brings_analysis, state_of
+from fluegas.scenario.fuel_state import fuel_state_of, heating_value
+from fluegas.scenario.library import with_library
 from fluegas.scenario.model import Scenario, Table
-from fluegas.scenario.readings_entry import ReadingState, readings_of, stack_readings, stack_recirculation
+from fluegas.scenario.readings_entry import (
+    ReadingState,
+    mean_of,
+    measures_of,
+    or_nan,
+    readings_of,
+    stack_emissions,
+    stack_readings,
+    stack_recirculation,
+)
 from fluegas.thermo.polynomials import FloatArray
 from fluegas.units import Measure
 
@@ -31,7 +36,7 @@ from fluegas.units import Measure
 class Column:
     """One setting in SI: its fuel, air, readings and what else holds for it alone; NaN where it has none of its own.
 
-    entry, air_entry: the fuel and air entries that hold for it, as written.
+    entry, air_entry: the fuel and air entries that hold for it, as written in the file or the fuel library.
     """
 
     name: str
@@ -41,6 +46,8 @@ class Column:
     air: AirState
     readings: ReadingState
     fuel_temperature: float
+    biogenic_share: float
+    sulfur_trioxide_share: float
     heat_input: float
     condensate: float
     price: float
@@ -68,12 +75,15 @@ def case_of(scenario: Scenario) -> Case:
     basis = scenario.top.text("basis") or GROSS
     reference = scenario.top.number("reference_temperature")
     temperature = 298.15 if reference is None else reference
-    columns, problems = [], []
+    columns: list[Column] = []
+    base = with_library(scenario.fuel)
+    problems = _base_fuel_problem(scenario, base, temperature, basis)
     for place in range(len(scenario.settings)):
         try:
-            columns.append(_column(scenario, place, basis, temperature))
+            columns.append(_column(scenario, base, place, basis, temperature))
         except InputError as error:
-            problems.append(_problem(scenario, place, str(error)))
+            if str(error) not in [problem.message for problem in problems if problem.key == "fuel"]:
+                problems.append(_problem(scenario, place, str(error)))
     if problems:
         raise ScenarioError(tuple(problems))
     try:
@@ -82,23 +92,33 @@ def case_of(scenario: Scenario) -> Case:
         raise ScenarioError((Problem(scenario.name, scenario.line_of(("plant",)), "plant", str(error)),)) from error
 
 
+def _base_fuel_problem(scenario: Scenario, base: Table, reference_temperature: float, basis: str) -> list[Problem]:
+    """Return what is wrong with the file's own fuel, once for all settings that burn it."""
+    overrides = [setting.table("fuel") for setting in scenario.settings]
+    if all(override is not None and brings_analysis(override) for override in overrides):
+        return []
+    try:
+        ash_carbon_of(base, fuel_state_of(base, None, reference_temperature, basis).fuel)
+    except InputError as error:
+        return [Problem(scenario.name, scenario.line_of(("fuel",)), "fuel", str(error))]
+    return []
+
+
 def _problem(scenario: Scenario, place: int, message: str) -> Problem:
     name = scenario.settings[place].text("name") or str(place + 1)
     return Problem(scenario.name, scenario.line_of(("setting", place)), f"setting {name!r}", message)
 
 
-def _column(scenario: Scenario, place: int, basis: str, reference_temperature: float) -> Column:
+def _column(scenario: Scenario, base: Table, place: int, basis: str, reference_temperature: float) -> Column:
     setting = scenario.settings[place]
-    override = setting.table("fuel")
-    entry = merged_fuel(scenario.fuel, override)
-    fuel = fuel_of(scenario.fuel, override, reference_temperature)
+    state = fuel_state_of(base, setting.table("fuel"), reference_temperature, basis)
+    fuel, entry = state.fuel, state.entry
     air, air_cautions = air_of(scenario.air, setting.table("air"), reference_temperature)
     readings = readings_of(setting, ash_carbon_of(entry, fuel))
-    value = float(fuel.gross_heating_value if basis == GROSS else fuel.net_heating_value)
+    value = heating_value(fuel, basis)
     heat_input = _heat_input(setting, fuel, value)
     if heat_input is None and place == scenario.baseline_index:
         heat_input = _heat_input(scenario.plant, fuel, value)
-    price, currency = _price(entry, fuel, value)
     own_temperature = entry.number("temperature")
     return Column(
         name=setting.text("name") or f"setting {place + 1}",
@@ -108,21 +128,23 @@ def _column(scenario: Scenario, place: int, basis: str, reference_temperature: f
         air=air,
         readings=readings,
         fuel_temperature=reference_temperature if own_temperature is None else own_temperature,
-        heat_input=np.nan if heat_input is None else heat_input,
+        biogenic_share=state.biogenic_share,
+        sulfur_trioxide_share=state.sulfur_trioxide_share,
+        heat_input=or_nan(heat_input),
         condensate=_condensate(setting, heat_input, value),
-        price=price,
-        currency=currency,
+        price=state.price,
+        currency=state.currency,
         limits=_limits(scenario.limits, setting),
-        cautions=(*fuel.cautions, *air_cautions, *_sulfur_caution(entry, fuel)),
+        cautions=(*state.cautions, *air_cautions),
     )
 
 
 def _heat_input(table: Table, fuel: Fuel, value: float) -> float | None:
-    heat_input = table.number("heat_input")
-    if heat_input is not None:
+    heat_input = mean_of(table, "heat_input")
+    if not np.isnan(heat_input):
         return heat_input
-    rate = table.measure("fuel_rate")
-    return None if rate is None else _mass_of(rate, fuel, "fuel_rate") * value
+    rates = [_mass_of(rate, fuel, "fuel_rate") for rate in measures_of(table, "fuel_rate")]
+    return float(np.mean(rates)) * value if rates else None
 
 
 def _mass_of(measure: Measure, fuel: Fuel, key: str) -> float:
@@ -136,38 +158,20 @@ def _mass_of(measure: Measure, fuel: Fuel, key: str) -> float:
 
 
 def _condensate(setting: Table, heat_input: float | None, value: float) -> float:
-    flow = setting.number("condensate")
-    if flow is None:
+    flow = mean_of(setting, "condensate")
+    if np.isnan(flow):
         return np.nan
     if heat_input is None:
         raise InputError("a measured condensate flow needs the setting's heat_input or fuel_rate beside it")
     return flow * value / heat_input
 
 
-def _price(entry: Table, fuel: Fuel, value: float) -> tuple[float, str | None]:
-    """Return the price per joule on the file's basis, and its currency."""
-    price = entry.price("price")
-    if price is None:
-        return np.nan, None
-    if price.dimension == "energy":
-        return price.value, price.currency
-    if price.dimension == "mass":
-        return price.value / value, price.currency
-    amount_per_mass = amount_per_mass_of(fuel)
-    if amount_per_mass is None:
-        raise InputError(
-            f"price {price.text!r} is per volume of gas, but the fuel is not a gas; give it by mass or energy"
-        )
-    return price.value * amount_per_mass / value, price.currency
-
-
 def _limits(limits: Table, setting: Table) -> Limits:
     default = Limits()
-    flag = limits.number("carbon_monoxide")
-    metal = setting.number("metal_temperature")
-    if metal is None:
-        metal = limits.number("metal_temperature")
-    if flag is None:
+    flag = mean_of(limits, "carbon_monoxide")
+    own = mean_of(setting, "metal_temperature")
+    metal = limits.number("metal_temperature") if np.isnan(own) else own
+    if np.isnan(flag):
         return Limits(metal_temperature=metal)
     return Limits(
         carbon_monoxide_flag=flag,
@@ -178,17 +182,9 @@ def _limits(limits: Table, setting: Table) -> Limits:
     )
 
 
-def _sulfur_trioxide_share(entry: Table) -> float:
-    share = entry.number("so3_share")
-    return SULFUR_TRIOXIDE_SHARE[state_of(entry)] if share is None else share
-
-
-def _sulfur_caution(entry: Table, fuel: Fuel) -> tuple[Caution, ...]:
-    if entry.number("so3_share") is not None or not float(fuel.element("S")) > 0:
-        return ()
-    share = SULFUR_TRIOXIDE_SHARE[state_of(entry)]
-    message = f"the acid dew point takes {100 * share:g} % of the sulfur as SO3; no so3_share was given"
-    return (Caution("so3_share_assumed", message, share, None, "common practice, no source"),)
+def _reference_oxygen(plant: Table, entry: Table) -> float:
+    stated = plant.number("reference_oxygen")
+    return REFERENCE_OXYGEN[state_of(entry)] if stated is None else stated
 
 
 def _assemble(scenario: Scenario, columns: Sequence[Column], basis: str) -> Case:
@@ -210,22 +206,24 @@ def _assemble(scenario: Scenario, columns: Sequence[Column], basis: str) -> Case
         basis=basis,
         other={} if other is None else {name: other.number(name) or 0.0 for name in other.entries},
         condensate=along(lambda column: column.condensate),
-        sulfur_trioxide_share=along(lambda column: _sulfur_trioxide_share(column.entry)),
+        sulfur_trioxide_share=along(lambda column: column.sulfur_trioxide_share),
         short_formula_a=np.array([a for a, _ in constants]),
         short_formula_b=np.array([b for _, b in constants]),
         recirculation=stack_recirculation([column.readings for column in columns]),
-        biogenic_share=along(lambda column: column.entry.number("biogenic_share") or 0.0),
+        biogenic_share=along(lambda column: column.biogenic_share),
+        emissions=stack_emissions([column.readings for column in columns]),
+        reference_oxygen=along(lambda column: _reference_oxygen(plant, column.entry)),
+        coldest_air=along(lambda column: or_nan(column.air_entry.number("coldest"))),
+        hottest_air=along(lambda column: or_nan(column.air_entry.number("hottest"))),
     )
-    rated = plant.number("rated_output")
-    hours = plant.number("operating_hours")
     unit = UnitInput(
         baseline=baseline,
         compared_with=_compared_with(scenario),
         heat_input=along(lambda column: column.heat_input),
         surface_share=surface_share,
         surface_heat=surface_heat,
-        rated_output=np.nan if rated is None else rated,
-        operating_time=np.nan if hours is None else hours,
+        rated_output=or_nan(plant.number("rated_output")),
+        operating_time=or_nan(plant.number("operating_hours")),
         annual_heat=_annual_heat(plant, first.fuel, basis),
         price=along(lambda column: column.price if column.currency == currency else np.nan),
     )
@@ -251,8 +249,7 @@ def _annual_heat(plant: Table, fuel: Fuel, basis: str) -> float:
         return np.nan
     if annual.dimension == "energy":
         return annual.value
-    value = float(fuel.gross_heating_value if basis == GROSS else fuel.net_heating_value)
-    return _mass_of(annual, fuel, "annual_fuel") * value
+    return _mass_of(annual, fuel, "annual_fuel") * heating_value(fuel, basis)
 
 
 def _compared_with(scenario: Scenario) -> tuple[int, ...]:

@@ -2,6 +2,11 @@
 
 from dataclasses import dataclass
 
+SHARE = ("fraction",)
+TEMPERATURE = ("temperature",)
+FUEL_RATE = ("mass_flow", "amount_flow")
+"""Dimensions that many inputs have."""
+
 
 @dataclass(frozen=True)
 class Field:

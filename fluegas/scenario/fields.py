@@ -1,14 +1,15 @@
 """Every input of a scenario file, format 1, declared once: pure data.
 
 Reading, messages, tables and help take label, dimension, limits and words from here. Limits are generous: they
-refuse what cannot be, not what is unusual. The declarations are in `unit_fields.py` (file, plant, fuel, air) and
-`setting_fields.py`.
+refuse what cannot be, not what is unusual. The declarations are in `unit_fields.py` (file, plant, air, limits),
+`fuel_fields.py`, `part_fields.py` and `setting_fields.py`.
 """
 
 from collections.abc import Mapping
 from types import MappingProxyType
 
 from fluegas.scenario.field import Field
+from fluegas.scenario.part_fields import PART_FIELDS
 from fluegas.scenario.setting_fields import SETTING_FIELDS
 from fluegas.scenario.unit_fields import UNIT_FIELDS
 
@@ -18,7 +19,7 @@ LARGEST_FILE = 256_000
 MOST_SETTINGS = 400
 LONGEST_NAME = 200
 
-FIELDS: tuple[Field, ...] = (*UNIT_FIELDS, *SETTING_FIELDS)
+FIELDS: tuple[Field, ...] = (*UNIT_FIELDS, *SETTING_FIELDS, *PART_FIELDS)
 """Every field, table by table."""
 
 FREE_TABLES = frozenset({"plant.other_losses"})

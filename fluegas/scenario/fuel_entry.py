@@ -1,7 +1,8 @@
 """From the fuel entries of a scenario to a Fuel: analysis, basis, heating value, moisture, ash streams.
 
-A setting may change the fuel. An override with an analysis of its own is another fuel, and nothing of the file's
-fuel holds for it; one with moisture alone wets the same dry fuel anew; other keys replace those of the file.
+A setting may change the fuel. An override with an analysis, a library fuel or parts of its own is another fuel, and
+nothing of the file's fuel holds for it; one with moisture alone wets the same dry fuel anew; other keys replace those
+of the file. Entries of the library lie beneath all of them.
 """
 
 import numpy as np
@@ -10,6 +11,7 @@ from fluegas.combustion.fuel import GASEOUS, LIQUID, SOLID, Fuel, fuel_gases
 from fluegas.combustion.gas_fuel import gas_amounts, gas_fuel
 from fluegas.combustion.solid_fuel import AS_FIRED, solid_fuel, unburned_carbon_share, with_moisture
 from fluegas.errors import InputError
+from fluegas.scenario.library import has_own_analysis, with_library
 from fluegas.scenario.model import Table
 from fluegas.units import Measure
 
@@ -18,11 +20,14 @@ SULFUR_TRIOXIDE_SHARE = {LIQUID: 0.02, SOLID: 0.01, GASEOUS: 0.02}
 
 
 def merged_fuel(base: Table, override: Table | None) -> Table:
-    """Return the fuel entries that hold for a setting."""
+    """Return the fuel entries that hold for a setting; `base` already has the library beneath it.
+
+    Raises InputError for a name that the library does not have.
+    """
     if override is None:
         return base
     if brings_analysis(override):
-        return override
+        return with_library(override)
     entries = {**base.entries, **{key: value for key, value in override.entries.items() if key != "mass_percent"}}
     if "gross_heating_value" in override.entries or "net_heating_value" in override.entries:
         for key in ("gross_heating_value", "net_heating_value"):
@@ -32,18 +37,28 @@ def merged_fuel(base: Table, override: Table | None) -> Table:
 
 
 def brings_analysis(override: Table) -> bool:
-    """Return whether an override has an analysis of its own, more than another moisture."""
-    mass = override.table("mass_percent")
-    return override.table("mole_percent") is not None or (mass is not None and set(mass.entries) != {"moisture"})
+    """Return whether an override is another fuel: with a library name, parts or an analysis that is more than wet."""
+    return "library" in override.entries or "part" in override.entries or has_own_analysis(override)
 
 
 def state_of(entry: Table) -> str:
-    """Return "gas", "liquid" or "solid": as stated, else gas for an analysis in mole percent."""
+    """Return "gas", "liquid" or "solid": as stated, else gas for an analysis in mole percent.
+
+    Of a blend it is the state of the part with the largest share.
+    """
+    parts = entry.rows("part")
+    if parts:
+        return state_of(max(parts, key=lambda part: part.number("share") or 0.0))
     return entry.text("state") or (GASEOUS if entry.table("mole_percent") is not None else SOLID)
 
 
-def fuel_of(base: Table, override: Table | None, reference_temperature: float) -> Fuel:
-    """Return the Fuel of a setting.
+def is_wholly_gas(entry: Table) -> bool:
+    """Return whether a fuel, or every part of a blend, is a gas."""
+    return all(part.table("mole_percent") is not None for part in entry.rows("part") or (entry,))
+
+
+def single_fuel(base: Table, override: Table | None, reference_temperature: float) -> Fuel:
+    """Return the Fuel of a setting that burns one fuel and no blend; `base` already has the library beneath it.
 
     Raises AnalysisError for an analysis that cannot be, InputError for a heating value whose unit does not fit.
     """
@@ -104,9 +119,9 @@ def _heating_value(measure: Measure | None, amount_per_mass: float | None) -> fl
 
 
 def amount_per_mass_of(fuel: Fuel) -> float | None:
-    """Return the mol/kg of a gas fuel, None for a liquid or solid."""
+    """Return the mol/kg of a gas fuel, None for a fuel with any liquid or solid in it."""
     total = float(np.sum(fuel.gases))
-    return total if total > 0 else None
+    return total if total > 0 and not float(fuel.heat_capacity) > 0 else None
 
 
 def ash_carbon_of(entry: Table, fuel: Fuel) -> float | None:

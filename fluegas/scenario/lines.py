@@ -1,103 +1,164 @@
 """On which lines the tables and keys of a scenario file stand.
 
-Markers are put in the place of values in a fresh copy of the document, the copy is written out, and the line of a
-marker is the answer: it holds for inline tables, arrays and headers alike. Only files with problems pay for it.
+One pass over the tokens of a text that has parsed as TOML, so every line is that of the key itself: in inline tables,
+in arrays over several lines, and where other tables stand between those of an array. Only files with problems pay for
+it.
 """
 
-from collections.abc import Sequence
-from typing import Any
+import re
+import tomllib
+from collections.abc import Iterable, Iterator
 
 Path = tuple[str | int, ...]
 
-_MARK = "fluegas-line-marker-{}-end"
-_ROUNDS = 3
+DEEPEST = 10
+"""Parts of the longest path that is looked at; no entry of a scenario lies deeper than 6."""
+
+_TOKEN = re.compile(
+    r"""(?P<blank>[ \t]+|\#[^\n]*)
+    |(?P<end>\n)
+    |(?P<text>\"{3}(?:[^"\\]|\\.|"{1,2}(?!"))*+\"{3,5}|'{3}(?:[^']|'{1,2}(?!'))*+'{3,5}|"(?:[^"\\\n]|\\.)*+"|'[^'\n]*+')
+    |(?P<mark>[]\[{}=,.])
+    |(?P<bare>[^\s"'#\[\]{}=,.]+)""",
+    re.VERBOSE | re.DOTALL,
+)
 
 
-def lines_of(source: str, paths: Sequence[Path]) -> dict[Path, int | None]:
-    """Return the line (from 1) of the key or table at each of `paths` in the text `source`.
+def lines_of(source: str, paths: Iterable[Path]) -> dict[Path, int | None]:
+    """Return the line (from 1) of the key or table at each of `paths` in the TOML text `source`.
 
-    A key that is missing is answered with the line of the table it belongs to; None if nothing is found.
+    What is missing is answered with the line of the nearest table that it belongs to, None if that is the whole file.
+    A table without a header of its own is answered with its first entry.
     """
-    import tomlkit
-    from tomlkit.exceptions import TOMLKitError
-
-    found: dict[Path, int | None] = {}
-    waiting = list(dict.fromkeys(paths))
-    try:
-        if tomlkit.dumps(tomlkit.parse(source)) != source:
-            waiting = []
-        for _ in range(_ROUNDS):
-            if not waiting:
-                break
-            document = tomlkit.parse(source)
-            waiting = _one_round(document, waiting, found, tomlkit.dumps)
-    except (TOMLKitError, RecursionError, ValueError, KeyError, TypeError, AttributeError, IndexError):
-        waiting = []
-    for path in paths:
-        if path not in found:
-            found[path] = _by_key(source, path)
-    return found
+    known = _Scan(source).lines
+    return {path: _nearest(known, path) for path in paths}
 
 
-def _one_round(document: Any, paths: list[Path], found: dict[Path, int | None], dumps: Any) -> list[Path]:
-    """Mark as many of `paths` as do not hide one another, note their lines, and return the others."""
-    marked: list[Path] = []
-    replaced: set[Path] = set()
-    left: list[Path] = []
-    for path in paths:
-        if any(path[: len(other)] == other for other in replaced) or any(
-            other[: len(path)] == path for other in marked
-        ):
-            left.append(path)
-            continue
-        where = _mark(document, path, _MARK.format(len(marked)))
-        marked.append(path)
-        if where is not None:
-            replaced.add(where)
-    lines = {mark: number for number, line in enumerate(dumps(document).split("\n"), 1) for mark in _marks_in(line)}
-    for place, path in enumerate(marked):
-        found[path] = lines.get(_MARK.format(place))
-    return left
+def _nearest(known: dict[Path, int], path: Path) -> int | None:
+    return next((known[path[:size]] for size in range(len(path), 0, -1) if path[:size] in known), None)
 
 
-def _marks_in(line: str) -> list[str]:
-    parts = line.split("fluegas-line-marker-")[1:]
-    return [_MARK.format(part.split("-end")[0]) for part in parts]
+def _tokens(source: str) -> Iterator[tuple[str, str, int]]:
+    """Yield kind, text and line of each token that is neither blank nor a comment."""
+    line = 1
+    for match in _TOKEN.finditer(source.replace("\r\n", "\n")):
+        kind, text = match.lastgroup or "", match[0]
+        if kind != "blank":
+            yield kind, text, line
+        line += text.count("\n")
+    yield "end", "", line
 
 
-def _mark(document: Any, path: Path, mark: str) -> Path | None:
-    """Put `mark` at `path`, or at the nearest table above; return the path of a value that it replaced."""
-    from tomlkit.items import AoT, Table
+class _Scan:
+    """Walks the tokens of a valid TOML text; `lines` has the line of every path in it."""
 
-    parent: Any = None
-    item: Any = document
-    done: Path = ()
-    for part in path:
-        try:
-            child = item[part]
-        except (KeyError, IndexError, TypeError):
-            break
-        parent, item, done = item, child, (*done, part)
-    while isinstance(item, AoT) or (isinstance(item, Table) and item.is_super_table()):
-        parent, first = item, 0 if isinstance(item, AoT) else str(next(iter(item)))
-        item, done = parent[first], (*done, first)
-    if isinstance(item, Table):
-        before = item.trivia.comment
-        item.comment(f"{mark} {before.lstrip('# ')}" if "fluegas-line-marker-" in before else mark)
-        return None
-    if parent is not None:
-        parent[done[-1]] = mark
-        return done
-    return None
+    def __init__(self, source: str) -> None:
+        self.lines: dict[Path, int] = {}
+        self.tokens = list(_tokens(source))
+        self.place = 0
+        self.rows: dict[Path, int] = {}
+        """How many tables each array of tables has so far."""
+        table: Path = ()
+        while self.place < len(self.tokens):
+            kind, text, _ = self.tokens[self.place]
+            if kind == "end":
+                self.place += 1
+            elif text == "[":
+                table = self.header()
+            else:
+                self.entry(table)
 
+    def next_is(self, text: str) -> bool:
+        return self.tokens[self.place][1] == text
 
-def _by_key(source: str, path: Path) -> int | None:
-    """Return the first line that starts with the last key of `path`: the best that can be said of an unusual file."""
-    key = next((part for part in reversed(path) if isinstance(part, str)), "")
-    for number, line in enumerate(source.splitlines(), 1):
-        if key and line.strip().lstrip("[").strip().strip("\"'").startswith(key):
-            return number
-    return None
+    def header(self) -> Path:
+        """Read [a.b] or [[a.b]] and return the path of the table that it opens."""
+        line = self.tokens[self.place][2]
+        self.place += 1
+        is_row = self.next_is("[")
+        self.place += is_row
+        path: Path = ()
+        *above, last = self.key()
+        self.place += 1 + is_row
+        for part in above:
+            path = self.newest((*path, part)[:DEEPEST])
+            self.lines.setdefault(path, line)
+        path = (*path, last)[:DEEPEST]
+        if is_row:
+            self.lines.setdefault(path, line)
+            self.rows[path] = self.rows.get(path, 0) + 1
+            path = self.newest(path)
+        self.lines[path] = line
+        return path
+
+    def newest(self, path: Path) -> Path:
+        """Return `path`, or its newest table if it is an array of tables."""
+        return (*path, self.rows[path] - 1)[:DEEPEST] if path in self.rows else path
+
+    def key(self) -> list[str]:
+        """Read a key, dotted or not, and return its parts."""
+        parts = [self.word()]
+        while self.next_is("."):
+            self.place += 1
+            parts.append(self.word())
+        return parts
+
+    def word(self) -> str:
+        kind, text, _ = self.tokens[self.place]
+        self.place += 1
+        return str(tomllib.loads(f"key = {text}")["key"]) if kind == "text" else text
+
+    def entry(self, table: Path) -> None:
+        """Read key = value inside `table`."""
+        line = self.tokens[self.place][2]
+        path = table
+        for part in self.key():
+            path = (*path, part)[:DEEPEST]
+            self.lines.setdefault(path, line)
+        self.place += 1
+        self.value(path)
+
+    def value(self, path: Path) -> None:
+        if len(path) == DEEPEST and self.tokens[self.place][1] in ("[", "{"):
+            self.skip()
+        elif self.next_is("["):
+            self.array(path)
+        elif self.next_is("{"):
+            self.inline_table(path)
+        else:
+            while self.tokens[self.place][0] != "end" and self.tokens[self.place][1] not in ",]}":
+                self.place += 1
+
+    def skip(self) -> None:
+        """Pass over an array or inline table, whatever lies in it."""
+        depth = 0
+        while True:
+            depth += {"[": 1, "{": 1, "]": -1, "}": -1}.get(self.tokens[self.place][1], 0)
+            self.place += 1
+            if depth == 0:
+                return
+
+    def array(self, path: Path) -> None:
+        self.place += 1
+        count = 0
+        while not self.next_is("]"):
+            kind, text, line = self.tokens[self.place]
+            if kind == "end" or text == ",":
+                self.place += 1
+                continue
+            self.lines[(*path, count)] = line
+            self.value((*path, count))
+            count += 1
+        self.place += 1
+
+    def inline_table(self, path: Path) -> None:
+        self.place += 1
+        while not self.next_is("}"):
+            if self.next_is(","):
+                self.place += 1
+            else:
+                self.entry(path)
+        self.place += 1
 
 
 def round_trip_problem(source: str) -> str | None:
@@ -108,6 +169,6 @@ def round_trip_problem(source: str) -> str | None:
     try:
         if tomlkit.dumps(tomlkit.parse(source)) == source:
             return None
-    except (TOMLKitError, RecursionError) as error:
+    except (TOMLKitError, RecursionError, ValueError) as error:
         return f"it cannot be read: {error}"
     return "its tables stand in an order that writing would change; put all [[setting]] tables one after the other"

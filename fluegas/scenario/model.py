@@ -7,7 +7,12 @@ from typing import Union
 
 from fluegas.units import Measure, Price
 
-Value = Union[Measure, Price, str, bool, int, float, "Table", tuple["Table", ...], tuple[str, ...]]
+Value = Union[Measure, Price, str, bool, int, float, "Table", tuple["Table", ...], tuple[str, ...], "Refused"]
+
+
+@dataclass(frozen=True)
+class Refused:
+    """Stands where an entry could not be used, so that no check calls it missing. No Scenario holds one."""
 
 
 @dataclass(frozen=True)
@@ -34,6 +39,10 @@ class Table:
         """Return the text under `key`, None if it is absent or not a text."""
         value = self.entries.get(key)
         return value if isinstance(value, str) else None
+
+    def refused(self, key: str) -> bool:
+        """Return whether there was an entry under `key` that could not be used."""
+        return isinstance(self.entries.get(key), Refused)
 
     def flag(self, key: str) -> bool:
         """Return whether `key` is true."""

@@ -14,19 +14,37 @@ from fluegas.errors import Problem, ScenarioError
 from fluegas.scenario.accuracy import accuracy_problems
 from fluegas.scenario.checking import contradictions
 from fluegas.scenario.field import Field
-from fluegas.scenario.fields import FIELDS_OF, FREE_TABLES, LARGEST_FILE, MOST_SETTINGS
+from fluegas.scenario.fields import FIELDS_OF, FORMAT, FREE_TABLES, LARGEST_FILE, MOST_SETTINGS
 from fluegas.scenario.lines import Path, lines_of
-from fluegas.scenario.model import Scenario, Table, Value
-from fluegas.scenario.values import RefusedError, value_of
-from fluegas.scenario.wording import nearest, quoted
+from fluegas.scenario.model import Refused, Scenario, Table, Value
+from fluegas.scenario.values import RefusedError, check_name, value_of
+from fluegas.scenario.wording import escaped, listed, nearest_word, quoted
 
 MOST_PROBLEMS = 100
 """Problems listed at most; the rest are counted."""
+MOST_OTHER_LOSSES = 50
 
 _OTHER_LOSS = Field(
     "plant.other_losses", "other loss", "Other loss", dimensions=("fraction",), low=0.0, high=0.5, example="0.6 %"
 )
-_INNER = {"setting.air": "air", "setting.fuel": "fuel"}
+_DEEP_KEY = re.compile(r"""(?<![\w-])(?:(?:[\w-]++|"(?:[^"\\\n]|\\.)*+"|'[^'\n]*+')[ \t]*+\.[ \t]*+){32}""")
+"""A dotted key of more parts than any table has: refused unparsed, since parsing takes memory by their square."""
+_PLAINER = {
+    "Illegal character '\\n'": "a text in quotation marks is not closed on its line",
+    "Cannot overwrite a value": "this key stands there already",
+    "Invalid value": 'not a value; texts and quantities stand in quotation marks, e.g. "6.4 %"',
+    "Expected newline or end of document after a statement": "the line should end here; texts and quantities stand in "
+    'quotation marks, e.g. "6.4 %"',
+}
+"""Messages of the parser that a person with a mistyped quantity would not understand, and what is said instead."""
+_TWICE = re.compile(r"Cannot (?:declare|mutate immutable namespace) \((.*?),?\)(?: twice)?")
+_INNER = {
+    "setting.air": "air",
+    "setting.fuel": "fuel",
+    "fuel.part.mole_percent": "fuel.mole_percent",
+    "fuel.part.mass_percent": "fuel.mass_percent",
+}
+_TOO_DEEP = "nests keys, tables or arrays too deep"
 _POSITION = re.compile(r"\s*\(at (?:line (\d+), column (\d+)|end of document)\)$")
 
 
@@ -37,7 +55,7 @@ def read_scenario(path: str | PathLike[str]) -> Scenario:
     syntax error, or all that is wrong with its entries.
     """
     file = FilePath(path)
-    name = str(path)
+    name = escaped(str(path))
     try:
         if not file.is_file():
             raise _alone(name, _not_a_file(file))
@@ -69,9 +87,11 @@ def parse_scenario(text: str, name: str = "scenario") -> Scenario:
     """Return the scenario written in `text`; `name` stands for the file in messages. Raises ScenarioError."""
     if len(text) > LARGEST_FILE:
         raise _alone(name, f"is larger than {LARGEST_FILE // 1000} kB; a scenario file holds far less")
+    text = text.removeprefix("\ufeff")
     document = _parsed(text, name)
     if not document:
         raise _alone(name, "is empty; the first line must be: fluegas = 1")
+    _refuse_newer_format(document.get("fluegas"), text, name)
     reader = _Reader()
     tables = reader.whole(document)
     problems = [*reader.problems, *contradictions(tables)]
@@ -81,6 +101,14 @@ def parse_scenario(text: str, name: str = "scenario") -> Scenario:
     return Scenario(name=name, source=text, top=tables, settings=tables.rows("setting"), line_finder=_line, **part)
 
 
+def _refuse_newer_format(given: object, text: str, name: str) -> None:
+    """Raise for a file of a later format, alone: what else looks wrong in it may be right there."""
+    if isinstance(given, int) and given > FORMAT:
+        number = str(given) if given < 1_000_000 else "of many digits"
+        message = f"the file is of format {number}; this fluegas reads format {FORMAT}: a newer fluegas is needed"
+        raise ScenarioError((Problem(name, _line(text, ("fluegas",)), "fluegas", message),))
+
+
 def _line(source: str, path: Path) -> int | None:
     return lines_of(source, [path])[path]
 
@@ -88,20 +116,27 @@ def _line(source: str, path: Path) -> int | None:
 def _parsed(text: str, name: str) -> Mapping[str, object]:
     import tomllib
 
+    if _DEEP_KEY.search(text):
+        raise _alone(name, _TOO_DEEP)
     try:
         return tomllib.loads(text)
     except tomllib.TOMLDecodeError as error:
         message = str(error)
         found = _POSITION.search(message)
         line, column = (int(found[1]), f", column {found[2]}") if found and found[1] else (text.count("\n") + 1, "")
-        said = _POSITION.sub("", message)
-        said = "".join(character if character.isprintable() else ascii(character)[1:-1] for character in said)
+        said = escaped(_POSITION.sub("", message))
+        said = _PLAINER.get(said, _TWICE.sub(_twice, said))
         key = f"syntax{column}"
         raise ScenarioError((Problem(name, line, key, f"{said[:1].lower()}{said[1:]}"),)) from error
     except RecursionError as error:
-        raise _alone(name, "nests tables or arrays too deep") from error
+        raise _alone(name, _TOO_DEEP) from error
     except ValueError as error:
-        raise _alone(name, f"holds a number or date that cannot be: {error}") from error
+        raise _alone(name, "holds a number of thousands of digits; nothing measured needs them") from error
+
+
+def _twice(found: re.Match[str]) -> str:
+    table = ".".join(part.strip("' ") for part in found[1].split(","))
+    return f"[{table}] stands there already; put its keys together"
 
 
 def _placed(problems: list[tuple[Path, str]], text: str, name: str) -> tuple[Problem, ...]:
@@ -122,7 +157,8 @@ def dotted(path: Path) -> str:
         if isinstance(part, int):
             out += f"[{part + 1}]"
         else:
-            word = part if part.replace("_", "").replace("-", "").isalnum() else quoted(part)
+            is_word = len(part) <= 40 and part.replace("_", "").replace("-", "").isalnum()
+            word = part if is_word else quoted(part)
             out += f".{word}" if out else word
     return out
 
@@ -140,19 +176,31 @@ class _Reader:
         if name == "accuracy":
             self.problems.extend(accuracy_problems(given))
             return _plain(given)
+        if name in FREE_TABLES and len(given) > MOST_OTHER_LOSSES:
+            self.problems.append((path, f"holds {len(given)} entries; at most {MOST_OTHER_LOSSES} are taken"))
         entries: dict[str, Value] = {}
         for key, value in given.items():
             where = (*path, key)
-            field = _OTHER_LOSS if name in FREE_TABLES else FIELDS_OF[name].get(key)
-            if field is None:
+            field = self.free(key, where) if name in FREE_TABLES else FIELDS_OF[name].get(key)
+            if field is not None:
+                entries[key] = self.entry(field, value, where)
+            elif name not in FREE_TABLES:
                 self.problems.append((where, _unknown(key, name)))
-                continue
-            found = self.entry(field, value, where)
-            if found is not None:
-                entries[key] = found
+                meant = nearest_word(key, FIELDS_OF[name])
+                if meant is not None and meant not in given:
+                    entries[meant] = Refused()
         return Table(MappingProxyType(entries))
 
-    def entry(self, field: Field, value: object, where: Path) -> Value | None:
+    def free(self, key: str, where: Path) -> Field | None:
+        """Return the field of an entry that the user named, None if it cannot be called so."""
+        try:
+            check_name(key)
+        except RefusedError as error:
+            self.problems.append((where, str(error)))
+            return None
+        return _OTHER_LOSS
+
+    def entry(self, field: Field, value: object, where: Path) -> Value:
         if field.later is None and field.kind in ("table", "rows"):
             inner = field.key if field.table == "top" else f"{field.table}.{field.key}"
             return self.inner(field.kind, _INNER.get(inner, inner), value, where)
@@ -160,36 +208,37 @@ class _Reader:
             return value_of(field, value)
         except RefusedError as error:
             self.problems.append((where, str(error)))
-            return None
+            return Refused()
 
-    def inner(self, kind: str, name: str, value: object, where: Path) -> Value | None:
+    def inner(self, kind: str, name: str, value: object, where: Path) -> Value:
         if kind == "table":
             if isinstance(value, Mapping):
                 return self.table(name, value, where)
             self.problems.append((where, f"must be a table: [{name}] or {{ key = ... }}"))
-            return None
+            return Refused()
         if not isinstance(value, list) or not all(isinstance(row, Mapping) for row in value):
             self.problems.append((where, f"must be tables: [[{name}]], one for each"))
-            return None
+            return Refused()
         if len(value) > MOST_SETTINGS:
             self.problems.append((where, f"holds {len(value)} tables; at most {MOST_SETTINGS} are taken"))
-            return None
+            return Refused()
         return tuple(self.table(name, row, (*where, place)) for place, row in enumerate(value))
 
 
 def _plain(given: Mapping[str, object]) -> Table:
-    """Return a table of texts as it was written, for what is checked but not used."""
-    return Table(MappingProxyType({key: str(value) for key, value in given.items()}))
+    """Return a table of shortened texts, for what is checked but not used."""
+    return Table(MappingProxyType({key: quoted(value) for key, value in given.items()}))
 
 
 def _unknown(key: str, table: str) -> str:
     known = FIELDS_OF[table]
-    here = nearest(key, known)
-    if here:
-        return f"unknown key{here}"
-    others = [name for name, fields in FIELDS_OF.items() if key in fields and name != table]
+    others = [name for name, fields in FIELDS_OF.items() if key in fields and name not in (table, "setting.readings")]
+    here = nearest_word(key, known, 0.75 if others else 0.6)
+    meant = f"; did you mean {here!r}?" if here else ""
     if others:
         places = " or ".join(f"[{name}]" if name != "top" else "the top of the file" for name in others[:3])
-        return f"unknown key here; it belongs in {places}"
+        return f"unknown key here; it belongs in {places}{meant}"
+    if here:
+        return f"unknown key{meant}"
     label = "the top of the file" if table == "top" else f"[{table}]"
-    return f"unknown key; {label} may have {', '.join(list(known)[:40])}"
+    return f"unknown key; {label} may have {listed(list(known)[:40])}"

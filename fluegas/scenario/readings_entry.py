@@ -5,14 +5,27 @@ from dataclasses import dataclass
 
 import numpy as np
 
+from fluegas.accounting.inputs import EmissionReadings
 from fluegas.combustion.flame import Recirculation
 from fluegas.combustion.product_gas import FlueReadings
 from fluegas.errors import InputError
 from fluegas.scenario.model import Table
 from fluegas.thermo.polynomials import FloatArray
 from fluegas.thermo.species import species
+from fluegas.units import Measure
 
-SPECIES = {"o2": "O2", "co2": "CO2", "co": "CO", "h2": "H2", "ch4": "CH4", "no": "NO"}
+SPECIES = {
+    "o2": "O2",
+    "co2": "CO2",
+    "co": "CO",
+    "h2": "H2",
+    "ch4": "CH4",
+    "no": "NO",
+    "no2": "NO2",
+    "nox": "NO2",
+    "so2": "SO2",
+    "carbon_monoxide": "CO",
+}
 
 
 @dataclass(frozen=True)
@@ -29,6 +42,9 @@ class ReadingState:
     h2: float
     ch4: float
     no: float
+    no2: float
+    nox: float
+    so2: float
     unburned_carbon: float
     chamber_temperature: float
     recirculated_share: float
@@ -42,13 +58,13 @@ def readings_of(setting: Table, ash_carbon: float | None) -> ReadingState:
 
     Raises InputError if there is no flue temperature.
     """
-    flue = _mean(setting, "flue_temperature")
+    flue = mean_of(setting, "flue_temperature")
     if np.isnan(flue):
         raise InputError("a setting needs its flue_temperature")
-    oxygen, carbon_dioxide = _mean(setting, "o2"), _mean(setting, "co2")
+    oxygen, carbon_dioxide = mean_of(setting, "o2"), mean_of(setting, "co2")
     is_wet = setting.text("o2_basis") == "wet"
     leads = not np.isnan(oxygen)
-    stated = _mean(setting, "unburned_carbon")
+    stated = mean_of(setting, "unburned_carbon")
     recirculation = setting.table("recirculation")
     share, temperature = (
         (0.0, np.nan)
@@ -61,31 +77,41 @@ def readings_of(setting: Table, ash_carbon: float | None) -> ReadingState:
         o2_wet=oxygen if is_wet else np.nan,
         co2=np.nan if leads else carbon_dioxide,
         co2_check=carbon_dioxide if leads else np.nan,
-        excess_air=_mean(setting, "excess_air"),
-        co=_mean(setting, "co"),
-        h2=_mean(setting, "h2"),
-        ch4=_mean(setting, "ch4"),
-        no=_mean(setting, "no"),
+        excess_air=mean_of(setting, "excess_air"),
+        co=mean_of(setting, "co"),
+        h2=mean_of(setting, "h2"),
+        ch4=mean_of(setting, "ch4"),
+        no=mean_of(setting, "no"),
+        no2=mean_of(setting, "no2"),
+        nox=mean_of(setting, "nox"),
+        so2=mean_of(setting, "so2"),
         unburned_carbon=stated if ash_carbon is None else ash_carbon,
-        chamber_temperature=_mean(setting, "chamber_temperature"),
+        chamber_temperature=mean_of(setting, "chamber_temperature"),
         recirculated_share=share,
         recirculated_temperature=flue if temperature is None or np.isnan(temperature) else temperature,
     )
 
 
-def _mean(setting: Table, key: str) -> float:
+def mean_of(setting: Table, key: str) -> float:
     """Return the mean of the repeat readings of `key`, else the setting's own value, NaN without either."""
-    values = [value for row in setting.rows("readings") if (value := _number(row, key)) is not None]
-    if not values:
-        value = _number(setting, key)
-        return np.nan if value is None else value
-    return float(np.mean(values))
+    values = [_number(measure, key) for measure in measures_of(setting, key)]
+    return float(np.mean(values)) if values else np.nan
 
 
-def _number(table: Table, key: str) -> float | None:
-    measure = table.measure(key)
-    if measure is None:
-        return None
+def or_nan(value: float | None) -> float:
+    """Return `value`, NaN where it was not given."""
+    return np.nan if value is None else value
+
+
+def measures_of(setting: Table, key: str) -> tuple[Measure, ...]:
+    """Return the repeat readings of `key`, else the setting's own, nothing without either."""
+    repeats = [row.measure(key) for row in setting.rows("readings")]
+    found = [measure for measure in repeats if measure is not None]
+    own = setting.measure(key)
+    return tuple(found) if found or own is None else (own,)
+
+
+def _number(measure: Measure, key: str) -> float:
     if measure.dimension == "mass_concentration":
         return measure.value / species(SPECIES[key]).molar_mass
     return measure.value
@@ -118,6 +144,17 @@ def stack_readings(states: Sequence[ReadingState]) -> FlueReadings:
         unburned_carbon=or_zero(lambda state: state.unburned_carbon),
         chamber_temperature=form(lambda state: state.chamber_temperature),
         rich_gases_read=np.array(read),
+    )
+
+
+def stack_emissions(states: Sequence[ReadingState]) -> EmissionReadings:
+    """Return the readings of several settings that only emissions need, shape `(n,)`."""
+    return EmissionReadings(
+        no2=np.array([state.no2 for state in states]),
+        nox=np.array([state.nox for state in states]),
+        so2=np.array([state.so2 for state in states]),
+        co_read=np.array([not np.isnan(state.co) for state in states]),
+        no_read=np.array([not np.isnan(state.no) for state in states]),
     )
 
 

@@ -2,14 +2,13 @@
 
 from dataclasses import replace
 
-from fluegas.scenario.field import Field
-from fluegas.scenario.unit_fields import FUEL_RATE, SHARE, TEMPERATURE
+from fluegas.scenario.field import FUEL_RATE, SHARE, TEMPERATURE, Field
 
 GAS_SHARE = ("fraction", "mass_concentration")
 FLUE_LOW, FLUE_HIGH = 200.0, 3000.0
 
 
-def _gas(key: str, label: str, species: str, text: str, high: float = 1.0, *, unused: bool = False) -> Field:
+def _gas(key: str, label: str, species: str, text: str, high: float = 1.0) -> Field:
     return Field(
         "setting",
         key,
@@ -21,7 +20,6 @@ def _gas(key: str, label: str, species: str, text: str, high: float = 1.0, *, un
         help=text,
         species=species,
         measured=True,
-        unused=unused,
     )
 
 
@@ -76,9 +74,9 @@ _READINGS = (
     _gas("h2", "H2, dry", "H2", "Hydrogen, dry; with CO it lets a fuel-rich gas be worked out."),
     _gas("ch4", "CH4, dry", "CH4", "Methane, dry."),
     _gas("no", "NO, dry", "NO", "Nitric oxide, dry."),
-    _gas("no2", "NO2, dry", "NO2", "Nitrogen dioxide, dry.", unused=True),
-    _gas("nox", "NOx as NO2, dry", "NO2", "Nitrogen oxides counted as NO2, dry.", unused=True),
-    _gas("so2", "SO2, dry", "SO2", "Sulfur dioxide, dry.", unused=True),
+    _gas("no2", "NO2, dry", "NO2", "Nitrogen dioxide, dry; for the emissions, too little of it to enter the balances."),
+    _gas("nox", "NOx as NO2, dry", "NO2", "Nitrogen oxides together, counted as NO2, dry; leads over NO and NO2."),
+    _gas("so2", "SO2, dry", "SO2", "Sulfur dioxide, dry; worked out from the fuel's sulfur if not read."),
     _temperature("flue_temperature", "Flue gas", "Of the flue gas where it leaves the boundary, after an air heater."),
     _temperature("chamber_temperature", "Chamber", "Of the gas where it leaves the furnace chamber."),
     _temperature("metal_temperature", "Coldest metal", "Of the coldest metal that the flue gas touches."),
@@ -144,11 +142,42 @@ _SETTING = (
     Field("setting", "note", "Note", "text", help="Free text."),
     Field("setting", "baseline", "Baseline", "flag", help="True for the setting that others are compared with."),
     Field("setting", "compare_with", "Compare with", "text", help="Name of another setting to compare this one with."),
-    Field("setting", "load", "Load", dimensions=SHARE, low=0.0, high=2.0, example="60 %", unused=True),
-    Field("setting", "o2_basis", "O2 basis", "choice", choices=("dry", "wet"), default="dry"),
+    Field(
+        "setting",
+        "load",
+        "Load",
+        dimensions=SHARE,
+        low=0.0,
+        high=2.0,
+        example="60 %",
+        unused=True,
+        help="Useful heat over the rated output.",
+    ),
+    Field(
+        "setting",
+        "o2_basis",
+        "O2 basis",
+        "choice",
+        choices=("dry", "wet"),
+        default="dry",
+        help="dry: the analyser dries its sample; wet: a probe in the duct.",
+    ),
     *_READINGS,
-    Field("setting", "heat_withdrawn", "Heat withdrawn", later="it comes with the flame at chemical equilibrium"),
-    Field("setting", "second", "Second point", "table", later="a second sampling point comes with a later version"),
+    Field(
+        "setting",
+        "heat_withdrawn",
+        "Heat withdrawn",
+        later="it comes with the flame at chemical equilibrium",
+        help="Heat taken from the flame in the chamber.",
+    ),
+    Field(
+        "setting",
+        "second",
+        "Second point",
+        "table",
+        later="a second sampling point comes with a later version",
+        help="Readings further downstream, which show air leaking in.",
+    ),
     Field("setting", "recirculation", "Recirculation", "table", help="Flue gas led back to the burner."),
     Field("setting", "readings", "Repeat readings", "rows", help="Readings of one state, averaged first."),
     Field("setting", "air", "Air", "table", help="What of [air] differs in this setting."),

@@ -1,68 +1,7 @@
-"""Inputs of the file, the plant, the fuel, the air, accuracies and limits."""
+"""Inputs of the file, the plant, the air and limits, and with them those of the fuel."""
 
-from fluegas.scenario.field import Field
-
-STATES = ("gas", "liquid", "solid")
-FUEL_KINDS = (
-    "natural gas",
-    "liquefied petroleum gas",
-    "propane",
-    "butane",
-    "coke-oven gas",
-    "biogas",
-    "distillate oil",
-    "plant oil",
-    "residual oil",
-    "anthracite",
-    "bituminous coal",
-    "lignite",
-    "wood",
-    "wood bark",
-    "other",
-)
-GASES = (
-    "methane",
-    "ethane",
-    "propane",
-    "n-butane",
-    "isobutane",
-    "n-pentane",
-    "isopentane",
-    "n-hexane",
-    "n-heptane",
-    "n-octane",
-    "ethylene",
-    "propylene",
-    "1-butene",
-    "isobutene",
-    "cis-2-butene",
-    "trans-2-butene",
-    "acetylene",
-    "benzene",
-    "toluene",
-    "methanol",
-    "ethanol",
-    "dimethyl ether",
-    "hydrogen",
-    "carbon monoxide",
-    "hydrogen sulfide",
-    "ammonia",
-    "carbonyl sulfide",
-    "carbon disulfide",
-    "hydrogen cyanide",
-    "carbon dioxide",
-    "nitrogen",
-    "oxygen",
-    "argon",
-    "helium",
-    "water",
-)
-MASS_PARTS = ("carbon", "hydrogen", "oxygen", "nitrogen", "sulfur", "chlorine", "moisture", "ash")
-
-SHARE = ("fraction",)
-TEMPERATURE = ("temperature",)
-HEATING_VALUE = ("energy_per_mass", "energy_per_amount")
-FUEL_RATE = ("mass_flow", "amount_flow")
+from fluegas.scenario.field import FUEL_RATE, SHARE, TEMPERATURE, Field
+from fluegas.scenario.fuel_fields import FUEL_FIELDS
 
 _TOP = (
     Field("top", "fluegas", "File format", "whole", low=1, example="1", help="Format of the file; this is format 1."),
@@ -88,17 +27,24 @@ _TOP = (
         help="At which heating values are stated and from which heat is counted; 0, 15, 20, 25 degC are usual.",
     ),
     *(
-        Field("top", key, label, kind)
-        for key, label, kind in (
-            ("plant", "Plant", "table"),
-            ("fuel", "Fuel", "table"),
-            ("air", "Air", "table"),
-            ("accuracy", "Accuracy", "table"),
-            ("limits", "Limits", "table"),
-            ("setting", "Setting", "rows"),
+        Field("top", key, label, kind, help=text)
+        for key, label, kind, text in (
+            ("plant", "Plant", "table", "The unit and what is known of it as a whole."),
+            ("fuel", "Fuel", "table", "What is fired: analysis, heating value, temperature, price."),
+            ("air", "Air", "table", "The combustion air; dry and at standard pressure if nothing else is said."),
+            ("accuracy", "Accuracy", "table", "How far instruments and other inputs may be off."),
+            ("limits", "Limits", "table", "Limits beyond which a caution is given."),
+            ("setting", "Setting", "rows", "One way of firing with its readings; the first is the baseline."),
         )
     ),
-    Field("top", "readings", "Readings log", "table", later="logger files come with a later version"),
+    Field(
+        "top",
+        "readings",
+        "Readings log",
+        "table",
+        later="logger files come with a later version",
+        help="Files of a logger and how to read them.",
+    ),
 )
 
 _PLANT = (
@@ -189,135 +135,7 @@ _PLANT = (
         low=0.0,
         high=0.2,
         example="3 %",
-        unused=True,
-        help="Oxygen to which emission limits refer.",
-    ),
-)
-
-_FUEL = (
-    Field("fuel", "library", "Library fuel", "text", later="the fuel library comes with a later version"),
-    Field("fuel", "name", "Fuel", "text", help="Name of the fuel or of the sample."),
-    Field(
-        "fuel",
-        "kind",
-        "Kind of fuel",
-        "choice",
-        choices=FUEL_KINDS,
-        help="Chooses constants that standards give by kind of fuel; the account itself needs only the analysis.",
-    ),
-    Field("fuel", "state", "State", "choice", choices=STATES, help="Gas, liquid or solid as fired."),
-    Field(
-        "fuel",
-        "temperature",
-        "Fuel temperature",
-        dimensions=TEMPERATURE,
-        low=200.0,
-        high=1000.0,
-        example="15 degC",
-        help="Where the fuel crosses the boundary, before the unit's own steam or flue gas heats it; the reference "
-        "temperature if not given, so that it brings no heat.",
-    ),
-    Field(
-        "fuel", "price", "Price", "price", example="38 EUR/MWh", help="By heat (file's basis), mass or normal volume."
-    ),
-    *(
-        Field(
-            "fuel",
-            f"{basis}_heating_value",
-            f"{basis.capitalize()} heating value",
-            dimensions=HEATING_VALUE,
-            low=1.0,
-            high=2e8,
-            example="45.5 MJ/kg",
-            help=f"{basis.capitalize()} heating value on the basis of the analysis, at the reference temperature.",
-        )
-        for basis in ("gross", "net")
-    ),
-    Field(
-        "fuel",
-        "heating_value_at",
-        "Heating value at",
-        "choice",
-        choices=("constant pressure", "constant volume"),
-        default="constant pressure",
-        help="A bomb calorimeter's value is at constant volume and is converted.",
-    ),
-    Field(
-        "fuel",
-        "analysis_basis",
-        "Analysis basis",
-        "choice",
-        choices=("as fired", "dry", "dry ash-free"),
-        default="as fired",
-        help="What the mass analysis and the heating value refer to; moisture is always as fired.",
-    ),
-    Field(
-        "fuel",
-        "specific_heat",
-        "Heat capacity",
-        dimensions=("heat_capacity_mass",),
-        low=100.0,
-        high=20_000.0,
-        example="2.0 kJ/kg K",
-        help="Of the dry liquid or solid fuel; 2.0 (liquid) and 1.3 kJ/kg K (solid) if not given.",
-    ),
-    Field(
-        "fuel", "density", "Density", dimensions=("density",), low=0.01, high=5000.0, unused=True, help="Of the fuel."
-    ),
-    Field(
-        "fuel",
-        "biogenic_share",
-        "Biogenic share",
-        dimensions=SHARE,
-        low=0.0,
-        high=1.0,
-        default="0 %",
-        help="Share of the carbon that is not fossil.",
-    ),
-    Field(
-        "fuel",
-        "so3_share",
-        "SO3 share",
-        dimensions=SHARE,
-        low=0.0,
-        high=0.5,
-        example="2 %",
-        help="SO3 over SO2, molar, for the acid dew point; 2 % for oil and 1 % for coal are common practice.",
-    ),
-    Field("fuel", "mole_percent", "Gas analysis", "table", help="Gas by gas in mole percent."),
-    Field(
-        "fuel", "mass_percent", "Mass analysis", "table", help="Element by element, moisture and ash in mass percent."
-    ),
-    Field("fuel", "ash_stream", "Ash streams", "rows", help="Where ash leaves and how much carbon it holds."),
-    Field("fuel", "part", "Co-firing", "rows", later="co-firing comes with a later version"),
-    *(
-        Field("fuel.mole_percent", gas, gas, "percent", low=0.0, high=1e3, help=f"Mole percent of {gas}.")
-        for gas in GASES
-    ),
-    *(
-        Field("fuel.mass_percent", part, part, "percent", low=0.0, high=1e3, help=f"Mass percent of {part}.")
-        for part in MASS_PARTS
-    ),
-    Field("fuel.ash_stream", "name", "Ash stream", "text", help="Where this ash leaves, such as grate or filter."),
-    Field(
-        "fuel.ash_stream",
-        "ash_share",
-        "Share of ash",
-        dimensions=SHARE,
-        low=0.0,
-        high=1.0,
-        example="70 %",
-        help="Share of the fuel's ash that leaves here.",
-    ),
-    Field(
-        "fuel.ash_stream",
-        "carbon",
-        "Carbon in residue",
-        dimensions=SHARE,
-        low=0.0,
-        high=0.99,
-        example="6 %",
-        help="Mass share of carbon in this residue, from the laboratory.",
+        help="Oxygen in the dry gas to which emission limits refer; 3 % (gas, liquid) or 6 % (solid) if not given.",
     ),
 )
 
@@ -332,9 +150,36 @@ _AIR = (
         example="22 degC",
         help="Of the combustion air, where its humidity is measured, usually at the fan's inlet.",
     ),
-    Field("air", "relative_humidity", "Relative humidity", dimensions=SHARE, low=0.0, high=1.0, example="55 %"),
-    Field("air", "wet_bulb", "Wet bulb", dimensions=TEMPERATURE, low=273.16, high=373.0, example="16 degC"),
-    Field("air", "dew_point", "Air dew point", dimensions=TEMPERATURE, low=200.0, high=373.0, example="9 degC"),
+    Field(
+        "air",
+        "relative_humidity",
+        "Relative humidity",
+        dimensions=SHARE,
+        low=0.0,
+        high=1.0,
+        example="55 %",
+        help="At the air temperature; one of relative_humidity, wet_bulb, dew_point.",
+    ),
+    Field(
+        "air",
+        "wet_bulb",
+        "Wet bulb",
+        dimensions=TEMPERATURE,
+        low=273.16,
+        high=373.0,
+        example="16 degC",
+        help="From a psychrometer, not iced; instead of the relative humidity.",
+    ),
+    Field(
+        "air",
+        "dew_point",
+        "Air dew point",
+        dimensions=TEMPERATURE,
+        low=200.0,
+        high=373.0,
+        example="9 degC",
+        help="Of the combustion air; instead of the relative humidity.",
+    ),
     Field(
         "air",
         "pressure",
@@ -346,7 +191,16 @@ _AIR = (
         example="1002 mbar",
         help="Absolute, at the unit.",
     ),
-    Field("air", "altitude", "Altitude", dimensions=("length",), low=-500.0, high=6000.0, example="340 m"),
+    Field(
+        "air",
+        "altitude",
+        "Altitude",
+        dimensions=("length",),
+        low=-500.0,
+        high=6000.0,
+        example="340 m",
+        help="Height above the sea, from which the pressure is taken; instead of pressure.",
+    ),
     Field(
         "air",
         "oxygen",
@@ -375,8 +229,26 @@ _AIR = (
         choices=("flue", "outside"),
         help="flue: the unit's own flue gas, which leaves the account as it is; outside: a credit.",
     ),
-    Field("air", "coldest", "Coldest day", dimensions=TEMPERATURE, low=200.0, high=350.0, unused=True),
-    Field("air", "hottest", "Hottest day", dimensions=TEMPERATURE, low=200.0, high=350.0, unused=True),
+    Field(
+        "air",
+        "coldest",
+        "Coldest day",
+        dimensions=TEMPERATURE,
+        low=200.0,
+        high=350.0,
+        example="-12 degC",
+        help="Coldest air of the year, for what it does to the excess air.",
+    ),
+    Field(
+        "air",
+        "hottest",
+        "Hottest day",
+        dimensions=TEMPERATURE,
+        low=200.0,
+        high=350.0,
+        example="36 degC",
+        help="Hottest air of the year, for what it does to the excess air.",
+    ),
 )
 
 _LIMITS = (
@@ -391,7 +263,15 @@ _LIMITS = (
         default="100 ppm",
         help="CO in the undiluted dry gas above which a caution is given; 300 and 1000 ppm stay further limits.",
     ),
-    Field("limits", "metal_temperature", "Coldest metal", dimensions=TEMPERATURE, low=200.0, high=2000.0),
+    Field(
+        "limits",
+        "metal_temperature",
+        "Coldest metal",
+        dimensions=TEMPERATURE,
+        low=200.0,
+        high=2000.0,
+        help="Coldest metal that the flue gas touches, held against the acid dew point.",
+    ),
 )
 
-UNIT_FIELDS = (*_TOP, *_PLANT, *_FUEL, *_AIR, *_LIMITS)
+UNIT_FIELDS = (*_TOP, *_PLANT, *FUEL_FIELDS, *_AIR, *_LIMITS)

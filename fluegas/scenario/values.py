@@ -6,9 +6,9 @@ from fluegas.errors import InputError, QuantityError
 from fluegas.scenario.field import Field
 from fluegas.scenario.fields import LONGEST_NAME
 from fluegas.scenario.model import Value
-from fluegas.scenario.wording import listed, nearest, quoted
+from fluegas.scenario.wording import is_plain, listed, nearest, quoted
 from fluegas.thermo.species import species
-from fluegas.units import Measure, display_unit, example, from_si, parse, parse_price
+from fluegas.units import Measure, example, from_si, parse, parse_price
 
 
 class RefusedError(InputError):
@@ -26,7 +26,7 @@ def value_of(field: Field, given: object) -> Value:
 
 
 def _quantity(field: Field, given: object) -> Value:
-    suggestion = field.example or example(field.dimensions[0])
+    suggestion = field.example or field.default or example(field.dimensions[0])
     if isinstance(given, bool) or not isinstance(given, str | int | float):
         raise RefusedError(f'must be text with a unit, e.g. "{suggestion}"')
     if not isinstance(given, str):
@@ -48,28 +48,28 @@ def _within(field: Field, measure: Measure) -> None:
             )
         value = value / species(field.species).molar_mass
     for limit, word, outside in (
-        (field.low, "at least", field.low is not None and value < field.low * (1 - 1e-12)),
-        (field.high, "at most", field.high is not None and value > field.high * (1 + 1e-12)),
+        (field.low, "at least", field.low is not None and value < field.low - 1e-12 * abs(field.low)),
+        (field.high, "at most", field.high is not None and value > field.high + 1e-12 * abs(field.high)),
     ):
         if outside and limit is not None:
             raise RefusedError(f"{quoted(measure.text)} is out of range: it must be {word} {_limit(limit, measure)}")
 
 
 def _limit(limit: float, measure: Measure) -> str:
-    dimension = "fraction" if measure.dimension == "mass_concentration" else measure.dimension
-    unit = display_unit(dimension, "si")
-    return f"{from_si(limit, dimension, unit):.6g} {unit}"
+    """Return a limit in the unit that the person chose, of the gas share where that was a mass concentration."""
+    if measure.dimension == "mass_concentration":
+        return f"{from_si(limit, 'fraction', '%'):.6g} % of the gas"
+    return f"{from_si(limit, measure.dimension, measure.unit):.6g} {measure.unit}"
 
 
 def _number(given: int | float) -> str:
-    return quoted(f"{given:g}" if isinstance(given, float) else given) if abs(given) < 1e15 else "this number"
+    return f"{given:.15g}" if abs(given) < 1e15 else "this number"
 
 
 def _text(field: Field, given: object) -> Value:
     if not isinstance(given, str):
         raise RefusedError("must be text in quotation marks")
-    allowed = {"\n", "\t"} if field.key == "note" else set()
-    if any(not character.isprintable() and character not in allowed for character in given):
+    if not is_plain(given, "\n\t" if field.key == "note" else ""):
         raise RefusedError(f"{quoted(given)} holds control characters; write plain text")
     longest = 10_000 if field.key == "note" else LONGEST_NAME
     if len(given) > longest:
@@ -77,6 +77,11 @@ def _text(field: Field, given: object) -> Value:
     if not given.strip() and field.key == "name":
         raise RefusedError("is empty; give a name")
     return given
+
+
+def check_name(text: str) -> None:
+    """Raise RefusedError for a name of the user's own that could not be shown."""
+    _text(Field("", "name", "name", "text"), text)
 
 
 def _choice(field: Field, given: object) -> Value:
@@ -128,7 +133,12 @@ def _price(field: Field, given: object) -> Value:
 
 
 def _quantity_or_word(field: Field, given: object) -> Value:
-    return given if isinstance(given, str) and given in field.choices else _quantity(field, given)
+    if isinstance(given, str) and given in field.choices:
+        return given
+    try:
+        return _quantity(field, given)
+    except RefusedError as error:
+        raise RefusedError(f"{error}; or the word {listed(field.choices)}") from error
 
 
 _BY_KIND = {
