@@ -28,7 +28,7 @@ def short_formula(terms: Terms) -> FloatArray:
     """
     if np.all(np.isnan(terms.data.short_formula_a)):
         return np.full((), np.nan)
-    oxygen = 100.0 * terms.gas.oxygen_left / terms.gas.dry_flue_gas
+    oxygen = 100.0 * terms.gas.dry_oxygen
     rise = terms.flue.at.kelvin - terms.data.air.temperature
     return np.asarray(rise * (terms.data.short_formula_a / (21.0 - oxygen) + terms.data.short_formula_b) / 100.0)
 
@@ -48,19 +48,23 @@ def available_heat(terms: Terms, basis: str) -> FloatArray:
         lost = lost + terms.latent_heat
     for symbol in UNBURNT_GASES.values():
         lost = lost + terms.unburnt_gas(symbol, basis)
-    brought = total(terms.credits_at(Temperature(terms.data.air.at_burner, "burner temperature")).values())
+    brought = total(terms.burner_credits.values())
     return np.where(known, 1.0 + (brought - lost) / terms.heating_value(basis), np.nan)
 
 
 def flame_temperature(terms: Terms) -> FloatArray:
     """Return the flame temperature of complete combustion [K]; NaN where fuel-rich."""
     data = terms.data
-    return complete_flame_temperature(terms.gas, data.fuel_temperature, terms.unburned_carbon, data.recirculation)
+    air_heat = terms.burner_credits["air"] + terms.burner_credits["air_moisture"]
+    return complete_flame_temperature(
+        terms.gas, data.fuel_temperature, terms.unburned_carbon, data.recirculation, air_heat
+    )
 
 
 def _water_pressure(terms: Terms) -> FloatArray:
     pressure = np.asarray(terms.gas.water / terms.gas.wet_flue_gas * terms.data.air.pressure)
-    return np.where(terms.gas.is_unknown, 0.0, pressure)
+    unknown = terms.gas.is_unknown
+    return np.where(unknown, 0.0, pressure) if np.any(unknown) else pressure
 
 
 def dew_point_of_water(terms: Terms) -> FloatArray:
@@ -70,6 +74,8 @@ def dew_point_of_water(terms: Terms) -> FloatArray:
 
 def dew_point_of_acid(terms: Terms) -> FloatArray:
     """Return the sulfuric acid dew point of the flue gas [K]; NaN without sulfur."""
+    if not np.any(terms.gas.amount("SO2")):
+        return np.full((), np.nan)
     trioxide = terms.gas.amount("SO2") * terms.data.sulfur_trioxide_share
     partial = trioxide / terms.gas.wet_flue_gas * terms.data.air.pressure
     return acid_dew_point(_water_pressure(terms), partial, terms.data.acid_correlation)

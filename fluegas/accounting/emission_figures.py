@@ -75,7 +75,7 @@ def _pollutant(pollutant: str) -> list[Figure]:
         return emissions.dry_share(terms, pollutant)
 
     def share_at_reference(terms: Terms) -> FloatArray:
-        return np.asarray(share(terms) * emissions.to_reference_oxygen(terms))
+        return emissions.scaled(share(terms), lambda: emissions.to_reference_oxygen(terms))
 
     def concentration(terms: Terms) -> FloatArray:
         return emissions.concentration(share(terms), pollutant)

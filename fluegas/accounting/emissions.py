@@ -62,8 +62,9 @@ def _nitrogen_oxides(terms: Terms) -> FloatArray:
 
 
 def _sulfur_dioxide(terms: Terms) -> FloatArray:
-    given = np.asarray(terms.data.emissions.so2)
-    return np.where(np.isnan(given), terms.gas.amount("SO2") / terms.gas.dry_flue_gas, given)
+    given, amount = np.asarray(terms.data.emissions.so2), terms.gas.amount("SO2")
+    balance = amount / terms.gas.dry_flue_gas if np.any(amount) else amount
+    return balance if np.all(np.isnan(given)) else np.where(np.isnan(given), balance, given)
 
 
 _SHARES: Mapping[str, Callable[[Terms], FloatArray]] = MappingProxyType(
@@ -86,6 +87,11 @@ def dry_share(terms: Terms, pollutant: str) -> FloatArray:
     return _SHARES[pollutant](terms)
 
 
+def scaled(share: FloatArray, factor: Callable[[], FloatArray]) -> FloatArray:
+    """Return `share` times what `factor` gives; a single share that is zero or unknown stays that one number."""
+    return share if share.size == 1 and not np.all(share > 0) else np.asarray(share * factor())
+
+
 def concentration(share: FloatArray, pollutant: str) -> FloatArray:
     """Return the mass [kg] in a normal cubic metre of dry gas for a mole fraction; 0 degC, 101.325 kPa."""
     return np.asarray(share * (species(COUNTED_AS[pollutant]).molar_mass / NORMAL_MOLAR_VOLUME))
@@ -105,23 +111,19 @@ def to_reference_oxygen(terms: Terms) -> FloatArray:
             float(np.min(in_air)),
             source="the oxidant's own share of oxygen",
         )
-    return np.asarray((in_air - reference) / (in_air - _oxygen(terms)))
+    return np.asarray((in_air - reference) / (in_air - terms.gas.dry_oxygen))
 
 
 def air_free_carbon_monoxide(terms: Terms) -> FloatArray:
     """Return the mole fraction of CO in the dry flue gas without excess air: y x/(x - O2)."""
     in_air = np.asarray(terms.data.air.oxygen)
-    return np.asarray(dry_share(terms, "co") * in_air / (in_air - _oxygen(terms)))
-
-
-def _oxygen(terms: Terms) -> FloatArray:
-    return np.asarray(terms.gas.oxygen_left / terms.gas.dry_flue_gas)
+    return scaled(dry_share(terms, "co"), lambda: in_air / (in_air - terms.gas.dry_oxygen))
 
 
 def mass_per_fuel(terms: Terms, pollutant: str) -> FloatArray:
     """Return the mass of a pollutant per mass of fuel [kg/kg]."""
     mass = species(COUNTED_AS[pollutant]).molar_mass
-    return np.asarray(dry_share(terms, pollutant) * terms.gas.dry_flue_gas * mass)
+    return scaled(dry_share(terms, pollutant), lambda: terms.gas.dry_flue_gas * mass)
 
 
 def carbon_dioxide(terms: Terms) -> FloatArray:

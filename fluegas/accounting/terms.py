@@ -128,6 +128,14 @@ class Terms:
         same = air.at_boundary is air.temperature
         return self.credits_at(self.air_temperature if same else Temperature(air.at_boundary, "burner temperature"))
 
+    @cached_property
+    def burner_credits(self) -> dict[str, FloatArray]:
+        """The credits with the air as it is at the burner, whoever preheats it."""
+        air = self.data.air
+        if air.at_burner is air.at_boundary:
+            return self.credits
+        return self.credits_at(Temperature(air.at_burner, "burner temperature"))
+
     def credits_at(self, temperature: Temperature) -> dict[str, FloatArray]:
         """Heat brought in with air of this `temperature` and with the fuel [J/kg fuel], by the names of CREDITS."""
         amounts = dry_air_amounts(1.0, self.data.air.oxygen)

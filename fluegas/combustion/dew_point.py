@@ -29,6 +29,8 @@ def water_dew_point(partial_pressure: ArrayLike) -> FloatArray:
     """
     p = np.asarray(partial_pressure, dtype=float)
     there = p > 1.0
+    if np.all(there):
+        return saturation_temperature(p)
     point: FloatArray = np.where(there, saturation_temperature(np.where(there, p, 1000.0)), np.nan)
     return point
 

@@ -28,19 +28,22 @@ class Recirculation:
 
 def complete_products(gas: ProductGas) -> FloatArray:
     """Return the amounts of COMPLETE_PRODUCTS [mol/kg fuel], shape `(8, ...)`; O2 is negative where fuel-rich."""
+    amounts = _amounts(gas)
+    return np.stack(np.broadcast_arrays(*(amounts.get(symbol, np.zeros(())) for symbol in COMPLETE_PRODUCTS)))
+
+
+def _amounts(gas: ProductGas) -> dict[str, FloatArray]:
+    """Return the amounts of those complete products that can be there, O2 last."""
     element = gas.fuel.element
     air = dry_air_amounts(gas.dry_air, gas.air.oxygen)
-    amounts = (
-        gas.burned_carbon + air["CO2"],
-        gas.water_formed + gas.fuel.moisture + gas.water_from_air,
-        element("S"),
-        element("Cl"),
-        element("N") / 2 + air["N2"],
-        element("Ar") + air["Ar"],
-        element("He"),
-        air["O2"] - gas.theoretical_oxygen,
-    )
-    return np.stack(np.broadcast_arrays(*amounts))
+    water = gas.water_formed + gas.fuel.moisture + gas.water_from_air
+    found = {"CO2": gas.burned_carbon + air["CO2"], "H2O": np.asarray(water)}
+    for symbol, amount in (("SO2", element("S")), ("HCl", element("Cl")), ("He", element("He"))):
+        if np.any(amount):
+            found[symbol] = amount
+    for symbol, amount in (("N2", element("N") / 2), ("Ar", element("Ar"))):
+        found[symbol] = amount + air[symbol] if np.any(amount) else air[symbol]
+    return {**found, "O2": np.asarray(air["O2"] - gas.theoretical_oxygen)}
 
 
 def heat_of_air(gas: ProductGas) -> FloatArray:
@@ -57,24 +60,27 @@ def complete_flame_temperature(
     fuel_temperature: FloatArray,
     unburned_heat: FloatArray | float = 0.0,
     recirculation: Recirculation | None = None,
+    air_heat: FloatArray | None = None,
 ) -> FloatArray:
     """Return the flame temperature of complete combustion [K]; NaN where fuel-rich.
 
-    `fuel_temperature` [K] is that at the burner; `unburned_heat` [J/kg fuel] stays in the ash.
+    `fuel_temperature` [K] is that at the burner; `unburned_heat` [J/kg fuel] stays in the ash. `air_heat` is what
+    `heat_of_air` gives, if the caller has it.
 
     Raises RangeError if the flame would be hotter than 6000 K.
     """
-    amounts = complete_products(gas)
-    lean = amounts[-1] >= -1e-7 * gas.theoretical_oxygen
-    np.maximum(amounts[-1:], 0.0, out=amounts[-1:])
-    products_set = gases_above(COMPLETE_PRODUCTS, gas.fuel.reference_temperature)
+    by_symbol = _amounts(gas)
+    lean = by_symbol["O2"] >= -1e-7 * gas.theoretical_oxygen
+    by_symbol["O2"] = np.maximum(by_symbol["O2"], 0.0)
+    products_set = gases_above(tuple(by_symbol), gas.fuel.reference_temperature)
+    amounts = np.stack(np.broadcast_arrays(*by_symbol.values()))
     products = products_set.mixture(amounts)
     heat = gas.fuel.net_heating_value - unburned_heat + gas.fuel.sensible_heat(fuel_temperature)
-    heat = heat + heat_of_air(gas)
+    heat = heat + (heat_of_air(gas) if air_heat is None else air_heat)
     if recirculation is not None:
         product_mass = np.tensordot(products_set.molar_mass, amounts, 1)
         air_mass = dry_air_molar_mass(gas.air.oxygen) * gas.dry_air
-        water_mass = gas.water_from_air * products_set.molar_mass[1]
+        water_mass = gas.water_from_air * products_set.molar_mass[products_set.index("H2O")]
         ratio = recirculation.share * (1.0 + air_mass + water_mass) / product_mass
         heat = (heat + ratio * products.enthalpy(recirculation.temperature)) / (1.0 + ratio)
     return temperature_from_enthalpy(products, np.where(lean & ~gas.is_unknown, heat, np.nan))

@@ -147,6 +147,11 @@ class ProductGas:
         return np.asarray(left + (self._oxygen_debt - 0.5 * np.asarray(r.no)) * self.dry_flue_gas)
 
     @cached_property
+    def dry_oxygen(self) -> FloatArray:
+        """Oxygen in the dry flue gas, mole fraction."""
+        return np.asarray(self.oxygen_left / self.dry_flue_gas)
+
+    @cached_property
     def is_unknown(self) -> BoolArray:
         """True where the account cannot be worked out: fuel-rich without CO and H2 readings, or a gas below zero."""
         unknown = (self.excess_air < -1e-9) & ~np.asarray(self.readings.rich_gases_read)

@@ -61,8 +61,14 @@ class Mixture:
     the amounts.
     """
 
-    def __init__(self, low: Callable[[], FloatArray], high: Callable[[], FloatArray]) -> None:
+    def __init__(
+        self,
+        low: Callable[[], FloatArray],
+        high: Callable[[], FloatArray],
+        at_one_temperature: Callable[[Formula, Temperature], FloatArray] | None = None,
+    ) -> None:
         self._make_low, self._make_high = low, high
+        self._at_one_temperature = at_one_temperature
 
     @cached_property
     def low(self) -> FloatArray:
@@ -96,6 +102,8 @@ class Mixture:
         return self.enthalpy(at) - at.kelvin * self.entropy(at)
 
     def _by_range(self, formula: Formula, at: Temperature) -> FloatArray:
+        if at.kelvin.ndim == 0 and self._at_one_temperature is not None:
+            return self._at_one_temperature(formula, at)
         if at.highest <= JOINT:
             return formula(self.low, at.kelvin, at.log)
         if at.lowest > JOINT:
@@ -138,8 +146,16 @@ class GasSet:
         n = np.asarray(amounts, dtype=float)
         flat = n.reshape(n.shape[0], -1)
         shape = (9, *n.shape[1:])
+
+        def at_one_temperature(formula: Formula, at: Temperature) -> FloatArray:
+            """Many mixtures at one temperature: the molar property of each gas, then one product."""
+            molar = formula(self._low if at.highest <= JOINT else self._high, at.kelvin, at.log)
+            return _composite(molar[None], flat).reshape(n.shape[1:])
+
         return Mixture(
-            lambda: _composite(self._low, flat).reshape(shape), lambda: _composite(self._high, flat).reshape(shape)
+            lambda: _composite(self._low, flat).reshape(shape),
+            lambda: _composite(self._high, flat).reshape(shape),
+            at_one_temperature if flat.shape[1] > 1 else None,
         )
 
     def each(self, dimensions: int = 0) -> Mixture:
