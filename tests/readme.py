@@ -50,6 +50,9 @@ def key_table() -> str:
             continue
         if table == "setting.readings":
             continue
+        if table == "fuel.part":
+            fields = {key: field for key, field in fields.items() if key in ("share", "share_of")}
+            lines.append("| `[[fuel.part]]` | tables | | A fuel burnt with others: the keys of `[fuel]`, and: |")
         lines.extend(_row(table, field) for field in fields.values() if field.later is None)
     return "\n".join(lines) + "\n"
 

@@ -5,7 +5,7 @@ and oxygen exclude those of the moisture. A heating value is on the basis of the
 """
 
 from collections.abc import Mapping
-from dataclasses import replace
+from dataclasses import dataclass, replace
 
 import numpy as np
 from numpy.typing import ArrayLike
@@ -52,65 +52,78 @@ def solid_fuel(
 
     Raises AnalysisError for an unknown part, a negative share, an empty analysis or a fuel that cannot burn.
     """
-    shares = _checked(fractions)
-    moisture, ash = shares.pop("moisture"), shares.pop("ash")
-    organic = np.stack(
-        [np.broadcast_to(shares[name], np.broadcast_shapes(*map(np.shape, shares.values()))) for name in shares]
-    )
-    total = (
-        organic.sum(axis=0)
-        + (ash if analysis_basis != DRY_ASH_FREE else 0)
-        + (moisture if analysis_basis == AS_FIRED else 0)
-    )
-    if not np.all(organic.sum(axis=0) > 0):
-        raise AnalysisError("the fuel analysis is empty; give at least carbon or hydrogen")
-    to_dry = _to_dry(analysis_basis, total, moisture, ash)
-    dry = organic * to_dry
-    dry_ash = ash if analysis_basis == DRY_ASH_FREE else ash * to_dry
-    wetness = moisture / total if analysis_basis == AS_FIRED else moisture
-    weights = atomic_weights()[: len(SOLID_ELEMENTS)].reshape(-1, *(1,) * (dry.ndim - 1))
-    elements = np.zeros((len(ELEMENTS), *dry.shape[1:]))
-    elements[: len(SOLID_ELEMENTS)] = dry / weights
-    water = wetness / species("H2O").molar_mass
+    dry = _dry_analysis(fractions, analysis_basis)
+    elements = np.zeros((len(ELEMENTS), *dry.organic.shape[1:]))
+    weights = atomic_weights()[: len(SOLID_ELEMENTS)].reshape(-1, *(1,) * (dry.organic.ndim - 1))
+    elements[: len(SOLID_ELEMENTS)] = dry.organic / weights
     stated, cautions = _gross_of_basis(
         elements,
-        water,
-        np.asarray(dry_ash),
+        dry.wetness / species("H2O").molar_mass,
+        dry.ash,
         analysis_basis,
         gross_heating_value,
         net_heating_value,
         at_constant_volume,
         reference_temperature,
     )
-    estimate = estimated_gross_heating_value({**dict(zip(SOLID_ELEMENTS.values(), dry, strict=True)), "ash": dry_ash})
-    if stated is None:
-        message = (
-            f"no heating value given: {float(np.min(estimate)) / 1e6:.4g} MJ/kg dry, gross, estimated from the "
-            f"analysis by {ESTIMATE_NAME}, average error {100 * ESTIMATE_SCATTER:.2g} %"
-        )
-        cautions += (
-            Caution(
-                "heating_value_estimated", message, float(np.min(estimate)), None, f"{ESTIMATE_NAME}, Fuel 81, 1051"
-            ),
-        )
-        stated = estimate
-    else:
-        cautions += disagreement_caution(stated, estimate, f"the estimate of {ESTIMATE_NAME}, dry", DISAGREEMENT)
+    gross, doubts = _held_against_estimate(stated, dry)
     dry_capacity = HEAT_CAPACITY[LIQUID if state == LIQUID else "solid"] if heat_capacity is None else heat_capacity
     fuel = Fuel(
         elements=elements,
-        moisture=np.zeros(np.shape(wetness)),
-        ash=np.asarray(dry_ash),
-        gross_heating_value=stated,
-        net_heating_value=stated - latent_heat(elements[1], 0.0, reference_temperature),
+        moisture=np.zeros(np.shape(dry.wetness)),
+        ash=dry.ash,
+        gross_heating_value=gross,
+        net_heating_value=gross - latent_heat(elements[1], 0.0, reference_temperature),
         heat_capacity=np.asarray(dry_capacity, dtype=float),
-        gases=np.zeros((len(FUEL_GASES), *(1,) * (dry.ndim - 1))),
+        gases=np.zeros((len(FUEL_GASES), *(1,) * (dry.organic.ndim - 1))),
         reference_temperature=float(reference_temperature),
-        cautions=sum_cautions(total) + cautions,
+        cautions=(*sum_cautions(dry.total), *cautions, *doubts),
     )
     if not np.all(fuel.net_heating_value > 0):
         raise AnalysisError("the fuel analysis has nothing that burns")
-    return with_moisture(fuel, wetness)
+    return with_moisture(fuel, dry.wetness)
+
+
+@dataclass(frozen=True)
+class _DryAnalysis:
+    """Dry shares of SOLID_ELEMENTS, `(6, ...)`, and of ash; moisture as fired; the sum of the analysis as given."""
+
+    organic: FloatArray
+    ash: FloatArray
+    wetness: FloatArray
+    total: FloatArray
+
+
+def _dry_analysis(fractions: Mapping[str, ArrayLike], basis: str) -> _DryAnalysis:
+    shares = _checked(fractions)
+    moisture, ash = shares.pop("moisture"), shares.pop("ash")
+    organic = np.stack(np.broadcast_arrays(*shares.values()))
+    sum_of_elements = organic.sum(axis=0)
+    if not np.all(sum_of_elements > 0):
+        raise AnalysisError("the fuel analysis is empty; give at least carbon or hydrogen")
+    total = sum_of_elements + (0 if basis == DRY_ASH_FREE else ash) + (moisture if basis == AS_FIRED else 0)
+    to_dry = _to_dry(basis, total, moisture, ash)
+    return _DryAnalysis(
+        organic=organic * to_dry,
+        ash=np.asarray(ash if basis == DRY_ASH_FREE else ash * to_dry),
+        wetness=np.asarray(moisture / total if basis == AS_FIRED else moisture),
+        total=np.asarray(total),
+    )
+
+
+def _held_against_estimate(stated: FloatArray | None, dry: _DryAnalysis) -> tuple[FloatArray, tuple[Caution, ...]]:
+    """Return the stated gross value, else the estimate, per kg dry, and what is doubtful about it."""
+    elements = dict(zip(SOLID_ELEMENTS.values(), dry.organic, strict=True))
+    estimate = estimated_gross_heating_value({**elements, "ash": dry.ash})
+    if stated is not None:
+        origin = f"the estimate of {ESTIMATE_NAME}, dry"
+        return stated, disagreement_caution(stated, estimate, origin, DISAGREEMENT)
+    least = float(np.min(estimate))
+    message = (
+        f"no heating value given: {least / 1e6:.4g} MJ/kg dry, gross, estimated from the "
+        f"analysis by {ESTIMATE_NAME}, average error {100 * ESTIMATE_SCATTER:.2g} %"
+    )
+    return estimate, (Caution("heating_value_estimated", message, least, None, f"{ESTIMATE_NAME}, Fuel 81, 1051"),)
 
 
 def _checked(fractions: Mapping[str, ArrayLike]) -> dict[str, FloatArray]:

@@ -170,7 +170,9 @@ def print_library(console: Console, sheets: Sequence[FuelSheet], *, system: str)
             state = sheet.state
             table.add_row(Text(state, style="underline"))
         table.add_row(Text("  " + (sheet.library or sheet.name)), *_line(sheet, unit, per_energy))
-    note = "As fired, heating values at 25 degC; CO2 by net heat, fossil and biogenic together."
+    kelvin, degrees = sheets[0].fuel.reference_temperature, unit_of("temperature", system)
+    reference = f"{shown(kelvin, 'temperature', degrees)} {degrees}"
+    note = f"As fired, heating values at {reference}; CO2 by net heat, fossil and biogenic."
     print_trimmed(
         console, [table, Text(), Text(note), Text("Typical analyses; an analysis of the fuel fired is surer.")]
     )

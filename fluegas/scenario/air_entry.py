@@ -1,6 +1,6 @@
 """From the air entries of a scenario to the Air of its settings."""
 
-from collections.abc import Callable, Sequence
+from collections.abc import Sequence
 from dataclasses import dataclass
 
 import numpy as np
@@ -9,7 +9,7 @@ from fluegas.accounting.cautions import degrees
 from fluegas.combustion.air import OXYGEN_IN_AIR, STANDARD_ATMOSPHERE, Air, pressure_at_altitude
 from fluegas.errors import Caution
 from fluegas.scenario.model import Table
-from fluegas.thermo.polynomials import FloatArray
+from fluegas.scenario.stacking import along, given_along
 
 HUMIDITY_FORMS = ("relative_humidity", "wet_bulb", "dew_point")
 PRESSURE_FORMS = ("pressure", "altitude")
@@ -83,20 +83,13 @@ def air_of(base: Table, override: Table | None, reference_temperature: float) ->
 def stack_air(states: Sequence[AirState]) -> Air:
     """Return the Air of several settings, shape `(n,)`."""
 
-    def along(number: Callable[[AirState], float]) -> FloatArray:
-        return np.array([number(state) for state in states], dtype=float)
-
-    def form(number: Callable[[AirState], float]) -> FloatArray | None:
-        values = along(number)
-        return None if np.all(np.isnan(values)) else values
-
     return Air(
-        temperature=along(lambda state: state.temperature),
-        pressure=along(lambda state: state.pressure),
-        relative_humidity=form(lambda state: state.relative_humidity),
-        wet_bulb=form(lambda state: state.wet_bulb),
-        dew_point=form(lambda state: state.dew_point),
-        oxygen=along(lambda state: state.oxygen),
-        burner_temperature=form(lambda state: state.burner_temperature),
+        temperature=along(states, lambda state: state.temperature),
+        pressure=along(states, lambda state: state.pressure),
+        relative_humidity=given_along(states, lambda state: state.relative_humidity),
+        wet_bulb=given_along(states, lambda state: state.wet_bulb),
+        dew_point=given_along(states, lambda state: state.dew_point),
+        oxygen=along(states, lambda state: state.oxygen),
+        burner_temperature=given_along(states, lambda state: state.burner_temperature),
         preheated_outside=np.array([state.preheated_outside for state in states]),
     )

@@ -10,6 +10,7 @@ from fluegas.combustion.flame import Recirculation
 from fluegas.combustion.product_gas import FlueReadings
 from fluegas.errors import InputError
 from fluegas.scenario.model import Table
+from fluegas.scenario.stacking import along, given_along
 from fluegas.thermo.polynomials import FloatArray
 from fluegas.thermo.species import species
 from fluegas.units import Measure
@@ -120,29 +121,22 @@ def _number(measure: Measure, key: str) -> float:
 def stack_readings(states: Sequence[ReadingState]) -> FlueReadings:
     """Return the FlueReadings of several settings, shape `(n,)`."""
 
-    def along(number: Callable[[ReadingState], float]) -> FloatArray:
-        return np.array([number(state) for state in states], dtype=float)
-
-    def form(number: Callable[[ReadingState], float]) -> FloatArray | None:
-        values = along(number)
-        return None if np.all(np.isnan(values)) else values
-
     def or_zero(number: Callable[[ReadingState], float]) -> FloatArray:
-        return np.nan_to_num(along(number))
+        return np.nan_to_num(along(states, number))
 
     read = [not (np.isnan(state.co) or np.isnan(state.h2)) for state in states]
     return FlueReadings(
-        flue_temperature=along(lambda state: state.flue_temperature),
-        o2=form(lambda state: state.o2),
-        o2_wet=form(lambda state: state.o2_wet),
-        co2=form(lambda state: state.co2),
-        excess_air=form(lambda state: state.excess_air),
+        flue_temperature=along(states, lambda state: state.flue_temperature),
+        o2=given_along(states, lambda state: state.o2),
+        o2_wet=given_along(states, lambda state: state.o2_wet),
+        co2=given_along(states, lambda state: state.co2),
+        excess_air=given_along(states, lambda state: state.excess_air),
         co=or_zero(lambda state: state.co),
         h2=or_zero(lambda state: state.h2),
         ch4=or_zero(lambda state: state.ch4),
         no=or_zero(lambda state: state.no),
         unburned_carbon=or_zero(lambda state: state.unburned_carbon),
-        chamber_temperature=form(lambda state: state.chamber_temperature),
+        chamber_temperature=given_along(states, lambda state: state.chamber_temperature),
         rich_gases_read=np.array(read),
     )
 
