@@ -157,7 +157,7 @@ def test_points_are_what_the_account_says_of_such_a_setting(
     """A file with a further setting of 5 % O2 gives the figures of the curve at 5 % O2, all of them."""
     text = Path(GAS).read_text(encoding="utf-8")
     file = tmp_path / "more.toml"
-    more = '\n[[setting]]\nname = "Five"\no2 = "5 %"\nco = "32 ppm"\nflue_temperature = "203 degC"\n'
+    more = '\n[[setting]]\nname = "Five"\no2 = "5 %"\nco = "32 ppm"\nnox = "68 ppm"\nflue_temperature = "203 degC"\n'
     file.write_text(text + more, encoding="utf-8")
     assert main(["account", str(file), "--json"]) == 0
     five = json.loads(capsys.readouterr().out)["settings"][-1]

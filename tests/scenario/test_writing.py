@@ -153,7 +153,7 @@ def test_a_new_table_stands_before_the_settings() -> None:
 
 def test_an_entry_in_a_table_of_one_line() -> None:
     path = ("setting", 0, "readings", 1)
-    assert '    { o2 = "7.0 %", co = "19 ppm", h2 = "4 ppm" },\n' in edited(LAUNDRY, (*path, "h2"), "4 ppm").source
+    assert '    { o2 = "7.0 %", co = "19 ppm", nox = "54 ppm", h2 = "4 ppm" },\n' in edited(LAUNDRY, (*path, "h2"), "4 ppm").source
     assert '    { o2 = "6.9 %", co = "19 ppm" },\n' in edited(LAUNDRY, (*path, "o2"), "6.9 %").source
     assert '    { o2 = "7.0 %" },\n' in without(LAUNDRY, (*path, "co")).source
     assert '    { co = "19 ppm" },\n' in without(LAUNDRY, (*path, "o2")).source
