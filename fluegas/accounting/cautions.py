@@ -119,7 +119,7 @@ def _carbon_monoxide(data: AccountInput, figures: Mapping[str, float], limits: L
     for limit, code, meaning in steps:
         if undiluted > limit:
             message = (
-                f"CO is {undiluted * 1e6:.3g} ppm undiluted (air-free, dry), limit {limit * 1e6:.3g} ppm: {meaning}"
+                f"CO is {undiluted * 1e6:.0f} ppm undiluted (air-free, dry), limit {limit * 1e6:.0f} ppm: {meaning}"
             )
             return (Caution(code, message, undiluted, limit, limits.carbon_monoxide_source),)
     return ()
@@ -172,6 +172,13 @@ def _validity(data: AccountInput, figures: Mapping[str, float]) -> tuple[Caution
         found.append(
             Caution("ideal_gas", message, pressure, IDEAL_GAS_PRESSURE, "enthalpy departures of a flue gas, CoolProp")
         )
+    air = _number(data.air.temperature)
+    if flue < air:
+        message = (
+            f"the flue gas, {degrees(flue, 1)}, is colder than the combustion air, {degrees(air, 1)}: one of the "
+            "readings cannot be right, or something from outside cools the gas"
+        )
+        found.append(Caution("flue_colder_than_air", message, flue, air, "energy balance"))
     coldest = min(flue, _number(data.air.temperature), _number(data.fuel_temperature))
     if coldest < COLDEST_CHECKED:
         message = f"at {degrees(coldest)} the species data are extrapolated below what was checked"
@@ -179,7 +186,7 @@ def _validity(data: AccountInput, figures: Mapping[str, float]) -> tuple[Caution
     efficiency = figures["efficiency.gross"]
     if efficiency <= 0:
         message = (
-            f"the losses exceed the heat input (useful heat {100 * efficiency:.3g} %): the readings cannot all be right"
+            f"the losses exceed the heat input (useful heat {100 * efficiency:.1f} %): the readings cannot all be right"
         )
         found.append(Caution("no_useful_heat", message, efficiency, 0.0, "energy balance"))
     return tuple(found)

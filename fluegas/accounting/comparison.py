@@ -56,7 +56,9 @@ def compare(
     itself = np.array([place == index for place, index in enumerate(other)]).reshape(-1, *(1,) * (efficiency.ndim - 1))
 
     def change(eta: FloatArray) -> FloatArray:
-        return np.where(itself, 0.0, eta[other] / eta - 1.0)
+        """Without useful heat on either side there is nothing to compare."""
+        useful = (eta > 0) & (eta[other] > 0)
+        return np.where(itself, 0.0, np.where(useful, eta[other] / np.where(useful, eta, 1.0) - 1.0, np.nan))
 
     before = annual.heat[other]
     fuel = change(efficiency)

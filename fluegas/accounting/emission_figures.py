@@ -50,11 +50,11 @@ def _carbon_dioxide() -> list[Figure]:
 
     dimension, found = "emission_per_energy", []
     for stem, label, useful_label, what, mass in (
-        ("co2", "CO2 per input", "CO2 per useful heat", "Fossil CO2", emissions.fossil_carbon_dioxide),
+        ("co2", "Fossil CO2 per input", "Fossil CO2, useful", "Fossil CO2", emissions.fossil_carbon_dioxide),
         (
             "all_co2",
             "All CO2 per input",
-            "All CO2, useful heat",
+            "All CO2, useful",
             "CO2, biogenic CO2 included,",
             emissions.carbon_dioxide,
         ),

@@ -190,7 +190,7 @@ def _oxides_disagree(data: AccountInput, figures: Mapping[str, float]) -> tuple[
     if not (parts > whole + margin or (complete and parts < whole - margin)):
         return ()
     message = (
-        f"NO and NO2 come to {parts * 1e6:.3g} ppm, but NOx was given as {whole * 1e6:.3g} ppm: one of them cannot be "
+        f"NO and NO2 come to {parts * 1e6:.0f} ppm, but NOx was given as {whole * 1e6:.0f} ppm: one of them cannot be "
         "right; the given NOx was taken"
     )
     return (Caution("nox_disagrees", message, parts, whole, "NOx is NO + NO2; margin 10 % and 5 ppm, our choice"),)
@@ -201,7 +201,7 @@ def _more_sulfur_than_fuel(data: AccountInput, figures: Mapping[str, float]) -> 
     if not read > balance * (1 + SULFUR_DOUBT) + SULFUR_FLOOR:
         return ()
     message = (
-        f"SO2 was read as {read * 1e6:.3g} ppm, but the fuel's sulfur gives {balance * 1e6:.3g} ppm at most: the "
+        f"SO2 was read as {read * 1e6:.0f} ppm, but the fuel's sulfur gives {balance * 1e6:.0f} ppm at most: the "
         "sulfur of the analysis, the reading or its O2 cannot be right, or the charge brings sulfur"
     )
     source = "sulfur balance; margin 20 % and 10 ppm, our choice"

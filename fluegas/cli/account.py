@@ -19,7 +19,7 @@ def command(file: str, as_json: bool, as_csv: bool, units: str, basis: str | Non
     """
     if as_json and as_csv:
         raise click.UsageError("--json and --csv cannot both be asked for; choose one")
-    from fluegas.cli.narration import note_unused_keys
+    from fluegas.cli.narration import note_cautions, note_unused_keys
     from fluegas.scenario.reading import read_scenario
     from fluegas.scenario.result import work_out
 
@@ -39,6 +39,7 @@ def command(file: str, as_json: bool, as_csv: bool, units: str, basis: str | Non
         from fluegas.report.csv_output import csv_text
 
         click.echo(csv_text(table), nl=False)
+        note_cautions(result, file)
         return
     from fluegas.cli.narration import console
     from fluegas.report.text_output import print_result

@@ -103,7 +103,7 @@ def command(
         raise click.UsageError("--json and --csv cannot both be asked for; choose one")
     if svg is not None and not svg.lower().endswith(".svg"):
         raise click.UsageError(f"--svg {svg!a}: the name of the drawing must end in .svg")
-    from fluegas.cli.narration import note_unused_keys
+    from fluegas.cli.narration import note_cautions, note_unused_keys
     from fluegas.scenario.reading import read_scenario
     from fluegas.scenario.result import work_out
     from fluegas.scenario.wording import escaped
@@ -111,9 +111,7 @@ def command(
     scenario = read_scenario(file)
     note_unused_keys(scenario)
     result = work_out(scenario)
-    doubts = {caution.message for cautions in result.cautions for caution in cautions}
-    if doubts:
-        click.echo(f"note: {len(doubts)} cautions about the settings: fluegas check {escaped(file)}", err=True)
+    note_cautions(result, file)
     places = _places(result, names)
     found = _curves(result, against, places, words, basis, _span(result, against, places, start, end, units), points)
     from fluegas.report.curve_table import curve_table

@@ -8,9 +8,12 @@ import click
 
 from fluegas.scenario.checking import unused_keys
 from fluegas.scenario.model import Scenario
+from fluegas.scenario.wording import escaped
 
 if TYPE_CHECKING:
     from rich.console import Console
+
+    from fluegas.scenario.result import Result
 
 
 def console() -> "Console":
@@ -31,3 +34,11 @@ def note_unused_keys(scenario: Scenario) -> None:
     keys = unused_keys(scenario)
     if keys:
         click.echo(f"note: understood but without effect in this version: {', '.join(keys)}", err=True)
+
+
+def note_cautions(result: "Result", file: str) -> None:
+    """Say how many cautions there are and where to read them, for outputs that cannot hold them."""
+    doubts = {caution.message for cautions in result.cautions for caution in cautions}
+    if doubts:
+        plural = "caution" if len(doubts) == 1 else "cautions"
+        click.echo(f"note: {len(doubts)} {plural} about the settings: fluegas check {escaped(file)}", err=True)

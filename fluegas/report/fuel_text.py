@@ -4,10 +4,12 @@ from collections.abc import Iterable, Sequence
 
 import numpy as np
 from rich.console import Console, RenderableType
+from rich.padding import Padding
 from rich.table import Table
 from rich.text import Text
 
-from fluegas.accounting.fuel_figures import FuelFigure, fuel_figure_table
+from fluegas.accounting.fuel_figures import fuel_figure_table
+from fluegas.accounting.fuel_terms import FuelFigure
 from fluegas.accounting.inputs import BASES
 from fluegas.combustion.compression_factor import METERING
 from fluegas.report.numbers import MISSING, shown, unit_of
@@ -71,7 +73,8 @@ def _sheet(sheet: FuelSheet, system: str, bases: Sequence[str]) -> Iterable[Rend
     if sheet.cautions:
         yield Text()
         yield Text(f"cautions: {len(sheet.cautions)}", style="bold")
-        yield from (Text(f"  ! {printable(caution.message, 600)}") for caution in sheet.cautions)
+        for caution in sheet.cautions:
+            yield Padding(Text(f"! {printable(caution.message, 600)}"), (0, 0, 0, 2))
 
 
 def _heading(sheet: FuelSheet, system: str) -> Iterable[RenderableType]:

@@ -202,7 +202,7 @@ def _emissions(result: Result, system: str, basis: str) -> Iterable[Row]:
     stems = ("co2", "all_co2") if np.any(case.data.biogenic_share) else ("co2",)
     for stem in stems:
         yield from _figures(result, (f"emissions.{stem}_per_useful", f"emissions.{stem}_per_input.{basis}"), system)
-        yield from _a_year(stem, "CO2" if stem == "co2" else "All CO2", "mass", year[stem], system)
+        yield from _a_year(stem, "Fossil CO2" if stem == "co2" else "All CO2", "mass", year[stem], system)
     found = [gas for gas in COUNTED_AS if _matters(account[f"emissions.{gas}.dry"])]
     if "nox" in found:
         found = [gas for gas in found if gas not in ("no", "no2")]

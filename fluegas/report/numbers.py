@@ -18,7 +18,7 @@ _DECIMALS = {
     "MWh": 1,
     "MMBtu": 1,
     "kW": 0,
-    "MMBtu/h": 2,
+    "MMBtu/h": 3,
     "t": 1,
     "kg/h": 0,
     "lb/h": 0,

@@ -50,7 +50,9 @@ def library_fuel(text: str) -> LibraryFuel:
 
 def no_such_fuel(text: str) -> str:
     """Return what is said to a name that the library does not have."""
-    hint = nearest(text, library_names()) or "; `fluegas fuels` lists them"
+    of_kind = next((name for name, raw in _raw().items() if raw.get("kind") == text.strip().casefold()), None)
+    near = f"; did you mean {of_kind!r}?" if of_kind else nearest(text, library_names())
+    hint = near or "; `fluegas fuels` lists them"
     return f"there is no library fuel {quoted(text)}{hint}"
 
 

@@ -132,6 +132,12 @@ CASES = {
         4e5,
         3e5,
     ),
+    "flue_colder_than_air": Case(
+        state(pipeline_gas(), flue_temperature=CELSIUS + 60, air_temperature=CELSIUS + 65),
+        state(pipeline_gas(), flue_temperature=CELSIUS + 60, air_temperature=CELSIUS + 55),
+        CELSIUS + 60,
+        CELSIUS + 65,
+    ),
     "cold_data": Case(
         state(pipeline_gas(), air_temperature=215.0), state(pipeline_gas(), air_temperature=225.0), 215.0, 220.0
     ),

@@ -54,9 +54,9 @@ def emissions_of(result: Result, place: int = 0) -> dict[str, Any]:
 
 def test_only_gases_that_were_read_have_rows() -> None:
     plain = rows(worked_out(), "emissions")
-    assert list(plain) == ["CO2 per useful heat", "CO2 per input", "CO2 a year"]
+    assert list(plain) == ["Fossil CO2, useful", "Fossil CO2 per input", "Fossil CO2 a year"]
     found = rows(worked_out(first='co = "50 ppm"'), "emissions")
-    assert {label.split()[0].rstrip(",") for label in found} == {"CO2", "Reference", "CO"}
+    assert {label.split()[0].rstrip(",") for label in found} == {"Fossil", "Reference", "CO"}
     assert found["CO concentration"] == ("mg/Nm3", ("62.5", "-"))
     assert found["Reference O2"] == ("%", ("3.00", "3.00"))
 
@@ -109,7 +109,7 @@ def test_biogenic_carbon_shows_beside_fossil() -> None:
         "[fuel.mole_percent]", '[fuel]\nbiogenic_share = "40 %"\n[fuel.mole_percent]'
     )
     found = rows(work_out(parse_scenario(text, "unit.toml")), "emissions")
-    fossil, every = (float(found[label][1][0]) for label in ("CO2 per input", "All CO2 per input"))
+    fossil, every = (float(found[label][1][0]) for label in ("Fossil CO2 per input", "All CO2 per input"))
     assert fossil == pytest.approx(0.6 * every, abs=0.1)
 
 
