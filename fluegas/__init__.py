@@ -20,6 +20,8 @@ if TYPE_CHECKING:
     from fluegas.errors import FluegasError, InputError, ScenarioError
     from fluegas.scenario.reading import read_scenario
     from fluegas.scenario.result import work_out
+    from fluegas.scenario.saving import save
+    from fluegas.scenario.writing import edited
 
 __version__ = "0.1.0"
 
@@ -33,11 +35,13 @@ __all__ = [
     "InputError",
     "ScenarioError",
     "UnitInput",
+    "edited",
     "figures",
     "gas_fuel",
     "heat_account",
     "ledger",
     "read_scenario",
+    "save",
     "solid_fuel",
     "work_out",
 ]
@@ -52,11 +56,13 @@ _HOME = {
     "InputError": "errors",
     "ScenarioError": "errors",
     "UnitInput": "accounting.ledger",
+    "edited": "scenario.writing",
     "figures": "accounting.figures",
     "gas_fuel": "combustion.gas_fuel",
     "heat_account": "accounting.account",
     "ledger": "accounting.ledger",
     "read_scenario": "scenario.reading",
+    "save": "scenario.saving",
     "solid_fuel": "combustion.solid_fuel",
     "work_out": "scenario.result",
 }

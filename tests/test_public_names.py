@@ -20,11 +20,13 @@ NAMES = {
     "InputError",
     "ScenarioError",
     "UnitInput",
+    "edited",
     "figures",
     "gas_fuel",
     "heat_account",
     "ledger",
     "read_scenario",
+    "save",
     "solid_fuel",
     "work_out",
 }
