@@ -23,7 +23,7 @@ from fluegas.accounting.inputs import AccountInput
 from fluegas.accounting.terms import Terms
 from fluegas.combustion.fuel import GASEOUS, LIQUID, SOLID
 from fluegas.errors import Caution, RangeError
-from fluegas.thermo.polynomials import FloatArray
+from fluegas.thermo.polynomials import BoolArray, FloatArray
 from fluegas.thermo.species import GAS_CONSTANT, species
 
 NORMAL_MOLAR_VOLUME = GAS_CONSTANT * 273.15 / 101_325.0
@@ -41,14 +41,19 @@ SULFUR_DOUBT, SULFUR_FLOOR = 0.20, 10e-6
 """SO2 may exceed the fuel's sulfur by so much of it and by this share (our choice) before a caution says so."""
 
 
+def _where_read(share: FloatArray, read: BoolArray) -> FloatArray:
+    known = read | (share > 0)
+    return share if np.all(known) else np.where(known, share, np.nan)
+
+
 def _carbon_monoxide(terms: Terms) -> FloatArray:
     share = np.asarray(terms.data.readings.co)
-    return np.where(np.asarray(terms.data.emissions.co_read) | (share > 0), share, np.nan)
+    return _where_read(share, np.asarray(terms.data.emissions.co_read))
 
 
 def _nitric_oxide(terms: Terms) -> FloatArray:
     share = np.asarray(terms.data.readings.no)
-    return np.where(np.asarray(terms.data.emissions.no_read) | (share > 0), share, np.nan)
+    return _where_read(share, np.asarray(terms.data.emissions.no_read))
 
 
 def _nitrogen_dioxide(terms: Terms) -> FloatArray:

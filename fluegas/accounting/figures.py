@@ -8,6 +8,8 @@ from collections.abc import Callable, Mapping
 from functools import cache
 from types import MappingProxyType
 
+import numpy as np
+
 from fluegas.accounting import beside
 from fluegas.accounting.air_density import air_density_figures
 from fluegas.accounting.emission_figures import emission_figures
@@ -56,15 +58,21 @@ def figures() -> Mapping[str, Figure]:
     return MappingProxyType({figure.name: figure for figure in every})
 
 
+def _share(amount: FloatArray, whole: FloatArray) -> FloatArray:
+    """Return amount/whole; a gas that is nowhere stays one zero, so that no array is filled with it."""
+    nowhere = amount.size == 1 and not np.any(amount) and bool(np.all(whole > 0))
+    return amount if nowhere else amount / whole
+
+
 def _mixture() -> list[Figure]:
     def air_per_fuel(terms: Terms) -> FloatArray:
         return terms.gas.dry_air * dry_air_molar_mass(terms.data.air.oxygen)
 
     def dry_share(gas: str) -> Callable[[Terms], FloatArray]:
-        return lambda terms: terms.gas.amount(gas) / terms.gas.dry_flue_gas
+        return lambda terms: _share(terms.gas.amount(gas), terms.gas.dry_flue_gas)
 
     def wet_share(gas: str) -> Callable[[Terms], FloatArray]:
-        return lambda terms: terms.gas.amount(gas) / terms.gas.wet_flue_gas
+        return lambda terms: _share(terms.gas.amount(gas), terms.gas.wet_flue_gas)
 
     def flue_gas_per_fuel(terms: Terms) -> FloatArray:
         fuel, carbon = terms.data.fuel, terms.gas.fuel.element("C") - terms.gas.burned_carbon
