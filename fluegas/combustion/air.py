@@ -113,6 +113,9 @@ def _ratio(vapour_pressure: FloatArray, pressure: FloatArray) -> FloatArray:
 
 
 def _from_relative(air: Air, humidity: FloatArray) -> FloatArray:
+    low, high = np.min(humidity, initial=0.0), np.max(humidity, initial=0.0)
+    if low >= 0 and high <= 1:
+        return _ratio(humidity * saturation_pressure(air.temperature), air.pressure)
     outside = (humidity < 0) | (humidity > 1)
     if np.any(outside):
         raise RangeError("relative humidity", float(np.asarray(humidity)[outside].flat[0]), 0.0, 1.0)
