@@ -19,6 +19,7 @@ from fluegas.scenario.fuel_sheet import FuelSheet, composition
 _BY_BASIS = (
     ("Heating value", "{}_heating_value", ""),
     ("  of ideal gas", "molar.{}_heating_value", ""),
+    ("  by mole", "molar.{}_heating_value", "kJ/mol"),
     ("Fossil CO2", "carbon_dioxide.{}.fossil", "kg/MWh"),
     ("", "carbon_dioxide.{}.fossil", "kg/MMBtu"),
     ("Biogenic CO2", "carbon_dioxide.{}.biogenic", "kg/MWh"),

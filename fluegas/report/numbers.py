@@ -25,6 +25,7 @@ _DECIMALS = {
     "kg/MWh": 1,
     "lb/MMBtu": 1,
     "MJ/kg": 3,
+    "kJ/mol": 2,
     "Btu/lb": 0,
     "mbar": 0,
     "inHg": 2,
