@@ -83,11 +83,6 @@ def _pollutant(pollutant: str) -> list[Figure]:
     def at_reference(terms: Terms) -> FloatArray:
         return emissions.concentration(share_at_reference(terms), pollutant)
 
-    def per_input(basis: str) -> Callable[[Terms], FloatArray]:
-        return lambda terms: emissions.mass_per_fuel(terms, pollutant) / terms.heating_value(basis)
-
-    stem, per_heat = f"emissions.{pollutant}", "trace_emission_per_energy"
-    balance = "reading times the dry flue gas of the element balances"
     rows = (
         ("dry", f"{label} share", "trace_fraction", f"Mole fraction of {label} in the dry flue gas.", _READING, share),
         (
@@ -114,19 +109,24 @@ def _pollutant(pollutant: str) -> list[Figure]:
             f"{_NORMAL}; {_REFERENCE}",
             at_reference,
         ),
-        *(
-            (
-                f"per_input.{basis}",
-                f"{label} per input",
-                per_heat,
-                f"Mass of {label} per {basis} heat input.",
-                balance,
-                per_input(basis),
-            )
-            for basis in BASES
-        ),
     )
-    return [
-        Figure(f"{stem}.{key}", text, dimension, EMISSIONS, help_text + origin, source, formula)
+    shares = [
+        Figure(f"emissions.{pollutant}.{key}", text, dimension, EMISSIONS, help_text + origin, source, formula)
         for key, text, dimension, help_text, source, formula in rows
     ]
+    return [*shares, *_per_input(pollutant)]
+
+
+def _per_input(pollutant: str) -> list[Figure]:
+    label, origin = LABELS[pollutant], _ORIGIN.get(pollutant, "")
+    source = "reading times the dry flue gas of the element balances"
+
+    def on(basis: str) -> Callable[[Terms], FloatArray]:
+        return lambda terms: emissions.mass_per_fuel(terms, pollutant) / terms.heating_value(basis)
+
+    found = []
+    for basis in BASES:
+        name, text = f"emissions.{pollutant}.per_input.{basis}", f"Mass of {label} per {basis} heat input.{origin}"
+        dimension = "trace_emission_per_energy"
+        found.append(Figure(name, f"{label} per input", dimension, EMISSIONS, text, source, on(basis)))
+    return found

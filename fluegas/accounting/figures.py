@@ -53,7 +53,7 @@ _BALANCE = "element balances, exact"
 @cache
 def figures() -> Mapping[str, Figure]:
     """Return every figure by name, in the order of tables."""
-    account = (*_mixture(), *_losses(), *_credits(), *_efficiency(), *_beside())
+    account = (*_mixture(), *_shares(), *_losses(), *_credits(), *_efficiency(), *_beside())
     every = (*account, *air_density_figures(), *emission_figures())
     return MappingProxyType({figure.name: figure for figure in every})
 
@@ -64,22 +64,18 @@ def _share(amount: FloatArray, whole: FloatArray) -> FloatArray:
     return amount if nowhere else amount / whole
 
 
+def _air_per_fuel(terms: Terms) -> FloatArray:
+    return terms.gas.dry_air * dry_air_molar_mass(terms.data.air.oxygen)
+
+
+def _flue_gas_per_fuel(terms: Terms) -> FloatArray:
+    fuel, carbon = terms.data.fuel, terms.gas.fuel.element("C") - terms.gas.burned_carbon
+    from_fuel = 1.0 - fuel.ash - carbon * atomic_weight("C")
+    return from_fuel + _air_per_fuel(terms) + terms.gas.water_from_air * species("H2O").molar_mass
+
+
 def _mixture() -> list[Figure]:
-    def air_per_fuel(terms: Terms) -> FloatArray:
-        return terms.gas.dry_air * dry_air_molar_mass(terms.data.air.oxygen)
-
-    def dry_share(gas: str) -> Callable[[Terms], FloatArray]:
-        return lambda terms: _share(terms.gas.amount(gas), terms.gas.dry_flue_gas)
-
-    def wet_share(gas: str) -> Callable[[Terms], FloatArray]:
-        return lambda terms: _share(terms.gas.amount(gas), terms.gas.wet_flue_gas)
-
-    def flue_gas_per_fuel(terms: Terms) -> FloatArray:
-        fuel, carbon = terms.data.fuel, terms.gas.fuel.element("C") - terms.gas.burned_carbon
-        from_fuel = 1.0 - fuel.ash - carbon * atomic_weight("C")
-        return from_fuel + air_per_fuel(terms) + terms.gas.water_from_air * species("H2O").molar_mass
-
-    found = [
+    return [
         Figure(
             "excess_air",
             "Excess air",
@@ -107,7 +103,7 @@ def _mixture() -> list[Figure]:
             MIXTURE,
             "Mass of dry air per mass of fuel as fired.",
             _BALANCE,
-            air_per_fuel,
+            _air_per_fuel,
             True,
         ),
         Figure(
@@ -117,9 +113,19 @@ def _mixture() -> list[Figure]:
             MIXTURE,
             "Mass of wet flue gas, condensate included, per mass of fuel as fired.",
             _BALANCE,
-            flue_gas_per_fuel,
+            _flue_gas_per_fuel,
         ),
     ]
+
+
+def _shares() -> list[Figure]:
+    def dry_share(gas: str) -> Callable[[Terms], FloatArray]:
+        return lambda terms: _share(terms.gas.amount(gas), terms.gas.dry_flue_gas)
+
+    def wet_share(gas: str) -> Callable[[Terms], FloatArray]:
+        return lambda terms: _share(terms.gas.amount(gas), terms.gas.wet_flue_gas)
+
+    found = []
     for basis, gases, share in (("dry", DRY_FLUE_GASES, dry_share), ("wet", FLUE_GASES, wet_share)):
         for gas in gases:
             name = f"flue_gas.{basis}.{gas}"

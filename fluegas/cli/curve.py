@@ -10,6 +10,7 @@ from fluegas.cli.options import basis_option, file_argument, units_option
 
 if TYPE_CHECKING:
     from fluegas.accounting.curve import Curves
+    from fluegas.report.curve_table import CurveTable
     from fluegas.scenario.result import Result
 
 _QUANTITIES = {
@@ -103,10 +104,11 @@ def command(
         raise click.UsageError("--json and --csv cannot both be asked for; choose one")
     if svg is not None and not svg.lower().endswith(".svg"):
         raise click.UsageError(f"--svg {svg!a}: the name of the drawing must end in .svg")
-    from fluegas.cli.narration import note_cautions, note_unused_keys
+    from fluegas.cli.narration import console, note_cautions, note_unused_keys
+    from fluegas.report.curve_output import curve_csv, curve_json, print_curves
+    from fluegas.report.curve_table import curve_table
     from fluegas.scenario.reading import read_scenario
     from fluegas.scenario.result import work_out
-    from fluegas.scenario.wording import escaped
 
     scenario = read_scenario(file)
     note_unused_keys(scenario)
@@ -114,35 +116,25 @@ def command(
     note_cautions(result, file)
     places = _places(result, names)
     found = _curves(result, against, places, words, basis, _span(result, against, places, start, end, units), points)
-    from fluegas.report.curve_table import curve_table
-
     table = curve_table(found, result.case, system=units)
     if svg is not None:
-        from fluegas.cli.output_file import write_whole
-        from fluegas.report.curve_drawing import curve_svg
-
-        write_whole(svg, curve_svg(table, scenario.top.text("title") or scenario.name))
-        click.echo(f"note: drawn into {escaped(svg)}", err=True)
+        _draw(svg, table, scenario.top.text("title") or scenario.name)
     if as_json:
-        from fluegas.report.curve_output import curve_json
-
         click.echo(curve_json(found, result), nl=False)
     elif as_csv:
-        from fluegas.report.curve_output import curve_csv
-
         click.echo(curve_csv(table), nl=False)
     else:
-        from fluegas.cli.narration import console
-        from fluegas.report.curve_output import print_curves
+        pictures, numbers, ascii_only = show != "table", show != "picture", plain or _needs_ascii()
+        print_curves(console(), result, table, pictures=pictures, numbers=numbers, ascii_only=ascii_only)
 
-        print_curves(
-            console(),
-            result,
-            table,
-            pictures=show != "table",
-            numbers=show != "picture",
-            ascii_only=plain or _needs_ascii(),
-        )
+
+def _draw(svg: str, table: "CurveTable", title: str) -> None:
+    from fluegas.cli.output_file import write_whole
+    from fluegas.report.curve_drawing import curve_svg
+    from fluegas.scenario.wording import escaped
+
+    write_whole(svg, curve_svg(table, title))
+    click.echo(f"note: drawn into {escaped(svg)}", err=True)
 
 
 def _places(result: "Result", names: tuple[str, ...]) -> list[int]:

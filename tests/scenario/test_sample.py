@@ -6,59 +6,7 @@ import pytest
 from fluegas.scenario.checking import unused_keys
 from fluegas.scenario.reading import parse_scenario
 from fluegas.scenario.result import Result, work_out
-
-SAMPLE = """\
-fluegas = 1                              # file format
-title = "Dye house boiler 2, autumn audit"
-basis = "gross"                          # or "net": what is shown first, and what percents and prices refer to
-reference_temperature = "25 degC"
-
-[plant]
-name = "Boiler 2"
-heat_input = "3.2 MW"                    # the baseline's; or fuel_rate = "290 kg/h" / "310 Nm3/h" / "11000 scf/h"
-operating_hours = "5200 h"               # a year
-surface_loss = "1.1 %"
-
-[fuel]
-name = "Pipeline gas, sample 14"
-state = "gas"
-temperature = "15 degC"
-price = "38 EUR/MWh"
-[fuel.mole_percent]
-methane = 93.1
-ethane = 4.2
-propane = 0.8
-nitrogen = 1.2
-"carbon dioxide" = 0.7
-
-[air]
-temperature = "22 degC"
-relative_humidity = "55 %"
-pressure = "1013 mbar"
-
-[accuracy]
-o2 = { shared = "0.2 vol%", random = "0.1 vol%" }
-co = { shared = ["10 ppm", "5 % of reading"] }          # the larger
-flue_temperature = { shared = "2 K", random = "1 K" }
-
-[[setting]]                              # the first is the baseline unless baseline = true stands elsewhere
-name = "As found"
-o2 = "6.4 %"
-co = "45 ppm"
-flue_temperature = "231 degC"
-
-[[setting]]
-name = "Trimmed"
-o2 = "3.2 %"
-co = "60 ppm"
-flue_temperature = "222 degC"
-
-[[setting]]
-name = "Cooled"
-o2 = "3.2 %"
-co = "60 ppm"
-flue_temperature = "148 degC"
-"""
+from tests.scenario.files import SAMPLE
 
 
 @pytest.fixture(scope="module")
